@@ -1,0 +1,5 @@
+/**
+ * A seeded, clock-driven instrument without hardware, for tests, the tour and simulated nights.
+ * Imports the contract.
+ */
+package beamwarden.simulated;
