@@ -1,5 +1,7 @@
 /**
- * Physical quantities as records with one unit each: energy, current, charge, length, area and
- * fluence, with their parsing and printing. Imports nothing but the JDK.
+ * Physical quantities, each a record with one unit, so that a number never travels without it.
+ *
+ * <p>Times are {@link java.time.Duration} and {@link java.time.Instant} throughout. Imports nothing
+ * but the JDK.
  */
 package beamwarden.quantity;
