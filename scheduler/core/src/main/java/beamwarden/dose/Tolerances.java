@@ -1,7 +1,8 @@
 package beamwarden.dose;
 
-import beamwarden.beam.Placement;
+import beamwarden.beam.Exposure;
 import beamwarden.instrument.Abilities;
+import beamwarden.instrument.Blanker;
 import java.time.Duration;
 
 /**
@@ -11,15 +12,24 @@ import java.time.Duration;
  * @param repeatabilityMetres how far off a stage move may end
  * @param placementMetres how far off the sample's placement may be
  * @param blanking how long the beam may stay on after it should be off
+ * @param blanksFlyback whether the beam is off between two lines
+ * @param probeMetres the full width of the probe at half maximum; 0 when nobody measured it
  */
 public record Tolerances(
-    double calibration, double repeatabilityMetres, double placementMetres, Duration blanking) {
-  /** What a profile and a placement guarantee. */
-  public static Tolerances of(Abilities abilities, Placement placement) {
+    double calibration,
+    double repeatabilityMetres,
+    double placementMetres,
+    Duration blanking,
+    boolean blanksFlyback,
+    double probeMetres) {
+  /** What a profile guarantees for an exposure, and its placement. */
+  public static Tolerances of(Abilities abilities, Exposure exposure) {
     return new Tolerances(
         abilities.field().calibration(),
         abilities.stage().repeatabilityMetres(),
-        placement.uncertaintyMetres(),
-        abilities.blanker().alone().orElse(Duration.ZERO));
+        exposure.placement().uncertaintyMetres(),
+        abilities.blanker().alone().orElse(Duration.ZERO),
+        abilities.blanker().kind() == Blanker.Kind.FAST,
+        ProbeTable.diameterMetres(abilities.probes(), exposure.conditions().beam()));
   }
 }
