@@ -1,9 +1,12 @@
 package beamwarden.instrument;
 
+import beamwarden.beam.Conditions;
 import beamwarden.beam.Mode;
+import beamwarden.beam.Point;
 import java.time.Duration;
 import java.util.List;
 import java.util.Map;
+import java.util.Optional;
 
 /**
  * What one instrument can do, how long it takes, and what it guarantees.
@@ -38,5 +41,26 @@ public record Abilities(
     filters = Map.copyOf(filters);
     modes = Map.copyOf(modes);
     probes = List.copyOf(probes);
+  }
+
+  /**
+   * How long it takes to prepare: the column settles, then the filter changes, then the stage
+   * travels, one after the other. From unknown conditions the column takes its longest settling and
+   * the filter is changed.
+   *
+   * @param from the conditions it stands at, when they are known
+   * @param fromStage where the stage stands
+   * @param to the wished conditions
+   * @param toStage the wished place of the stage
+   */
+  public Duration preparation(
+      Optional<Conditions> from, Point fromStage, Conditions to, Point toStage) {
+    Duration settling =
+        from.map(known -> column.settling(known.beam(), to.beam()))
+            .orElseGet(column::longestSettling);
+    boolean filterStays = from.filter(known -> known.filter().equals(to.filter())).isPresent();
+    return settling
+        .plus(filterStays ? Duration.ZERO : filterChange)
+        .plus(stage.travel(fromStage, toStage));
   }
 }

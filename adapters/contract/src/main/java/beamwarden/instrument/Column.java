@@ -25,8 +25,13 @@ public record Column(
   /** The wait after a change of settings; none when nothing changes. Waits run side by side. */
   public Duration settling(BeamSettings from, BeamSettings to) {
     if (!from.voltage().equals(to.voltage())) {
-      return voltageSettling.compareTo(currentSettling) > 0 ? voltageSettling : currentSettling;
+      return longestSettling();
     }
     return from.current().equals(to.current()) ? Duration.ZERO : currentSettling;
+  }
+
+  /** The wait after a change of everything, or from settings that are not known. */
+  public Duration longestSettling() {
+    return voltageSettling.compareTo(currentSettling) > 0 ? voltageSettling : currentSettling;
   }
 }

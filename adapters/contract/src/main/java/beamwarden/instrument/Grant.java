@@ -15,8 +15,8 @@ import java.time.Duration;
  * @param fence the fencing number under which it was stored
  * @param session the chamber session for which it is meant
  * @param exposure what to expose, and where
- * @param longestBeamOn the longest time the beam may be on under it, from first to last electron,
- *     the time to blank included
+ * @param longestBeamOn the longest time the beam may be on under it, the time to blank included;
+ *     times between lines in which a fast blanker keeps it off do not count
  * @param highestCurrent the current above which the exposure must be ended at once
  * @param heartbeat the number of the heartbeat from which {@code latestStart} is counted
  * @param latestStart the time after that heartbeat by which the exposure must have begun
