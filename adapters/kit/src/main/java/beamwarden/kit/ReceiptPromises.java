@@ -106,7 +106,7 @@ final class ReceiptPromises {
     }
   }
 
-  private static String sha256(byte[] content) {
+  static String sha256(byte[] content) {
     try {
       return HexFormat.of().formatHex(MessageDigest.getInstance("SHA-256").digest(content));
     } catch (NoSuchAlgorithmException e) {

@@ -23,6 +23,7 @@ import java.time.Duration;
 import java.time.Instant;
 import java.util.ArrayList;
 import java.util.List;
+import java.util.Optional;
 import java.util.OptionalLong;
 import java.util.Set;
 import java.util.function.Predicate;
@@ -267,9 +268,12 @@ final class Trial {
 
   <E extends InstrumentEvent> Heard<E> await(
       int mark, Class<E> kind, Predicate<E> wished, Duration atMost) {
-    return recorder
-        .await(mark, kind, wished, atMost)
-        .orElseThrow(() -> broken("no " + kind.getSimpleName() + " came within " + atMost));
+    Optional<Heard<E>> heard = recorder.await(mark, kind, wished, atMost);
+    if (heard.isEmpty()) {
+      checkOrder();
+      throw broken("no " + kind.getSimpleName() + " came within " + atMost);
+    }
+    return heard.get();
   }
 
   void require(boolean kept, String otherwise) {
