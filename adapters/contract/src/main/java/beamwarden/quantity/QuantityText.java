@@ -48,7 +48,7 @@ public final class QuantityText {
           number + " has no unit",
           "write " + dimension.withArticle() + " such as " + dimension.example());
     }
-    UnitTable.Unit unit = unit(number, matcher.group(3), dimension);
+    Unit unit = unit(number, matcher.group(3), dimension);
     if (matcher.group(2).isEmpty() && !unit.symbol().equals("%") && !unit.symbol().equals("°")) {
       throw new QuantityFormatException(
           trimmed + " has no space before its unit", "write " + number + " " + unit.symbol());
@@ -109,8 +109,8 @@ public final class QuantityText {
     return trimmed;
   }
 
-  private static UnitTable.Unit unit(String number, String written, Dimension dimension) {
-    Optional<UnitTable.Unit> found = UnitTable.unit(written);
+  private static Unit unit(String number, String written, Dimension dimension) {
+    Optional<Unit> found = UnitTable.unit(written);
     if (found.isPresent() && found.get().dimension() == dimension) {
       return found.get();
     }

@@ -1,7 +1,6 @@
 package beamwarden.quantity;
 
 import java.math.BigDecimal;
-import java.math.MathContext;
 import java.text.Normalizer;
 import java.util.Collection;
 import java.util.LinkedHashMap;
@@ -22,23 +21,6 @@ final class UnitTable {
       Map.of("f", -15, "p", -12, "n", -9, "u", -6, "m", -3, "", 0, "k", 3, "M", 6, "G", 9, "T", 12);
 
   private static final Map<String, Unit> UNITS = new LinkedHashMap<>();
-
-  /**
-   * One unit.
-   *
-   * @param symbol how it is written, with ASCII signs where there are any
-   * @param dimension what it measures
-   * @param factor what one of it is in the unit of the dimension, before {@code divisor}
-   * @param divisor what that is divided by, so that only the last step rounds
-   */
-  record Unit(String symbol, Dimension dimension, BigDecimal factor, BigDecimal divisor) {
-    BigDecimal convert(BigDecimal number) {
-      BigDecimal product = number.multiply(factor);
-      return divisor.compareTo(BigDecimal.ONE) == 0
-          ? product
-          : product.divide(divisor, MathContext.DECIMAL128);
-    }
-  }
 
   static {
     prefixed("m", Dimension.LENGTH);

@@ -89,8 +89,8 @@ class QuantityTextTest {
     void areAllReadBackByTheirOwnSymbol() {
       assertEquals(
           Dimension.values().length,
-          UnitTable.units().stream().map(UnitTable.Unit::dimension).distinct().count());
-      for (UnitTable.Unit unit : UnitTable.units()) {
+          UnitTable.units().stream().map(Unit::dimension).distinct().count());
+      for (Unit unit : UnitTable.units()) {
         assertTrue(QuantityText.value("1 " + unit.symbol(), unit.dimension()).signum() > 0);
       }
       for (Dimension dimension : Dimension.values()) {
