@@ -6,6 +6,9 @@ import java.util.List;
 /**
  * Where the books are kept, durably. One writer.
  *
+ * <p>After a commit that threw, the journal takes no more entries: whoever wrote must stop, and
+ * read what is there when it starts again.
+ *
  * <p>{@link #commit} must be atomic: after it returns, all its entries are on disk and will be read
  * back after any crash; when it throws, either none of them is, or it is not known, and the caller
  * must treat what it wanted to store as never stored and never send it.
@@ -18,8 +21,13 @@ public interface Journal extends AutoCloseable {
   List<Recorded> read();
 
   /**
-   * Raises the instrument's fence by one, durably, and returns it. Every commit under a lower fence
-   * is refused from here on.
+   * Raises the instrument's fence above every fence of this store, durably, together with a {@link
+   * Entry.FenceRaised} entry, and returns it. Every commit under the instrument's earlier fences is
+   * refused from here on.
+   *
+   * @param instrument the instrument's name
+   * @param at the moment that is written beside the entry
+   * @throws JournalException when it was not raised, or it is not known
    */
   long raiseFence(String instrument, Instant at);
 
