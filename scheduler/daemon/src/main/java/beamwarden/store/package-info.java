@@ -1,5 +1,9 @@
 /**
- * The ledger's journal on a database. JDBC types stay in this package; it imports {@code document},
- * the core and the contract.
+ * The ledger's journal in an SQLite file.
+ *
+ * <p>{@link beamwarden.store.SqliteJournal} is all that others see; JDBC and JSON types stay in
+ * this package. What the file holds stands in {@code schema-0001.sql}, how its rows are chained in
+ * {@link beamwarden.ledger.ChainHash}, and what is promised of a body in {@code EntryJson}. Imports
+ * {@code bridge} for the JSON form of the contract, the core and the contract.
  */
 package beamwarden.store;
