@@ -1,5 +1,7 @@
 /**
- * Electrons in matter, the probe, absorbed dose and counting statistics, as pure functions that
- * name their sources. Imports {@code beam} and {@code quantity}.
+ * Electrons in matter, the probe and the raster, as pure functions that name their sources.
+ *
+ * <p>Sigma is a standard deviation, width a full width at half maximum. Fluences are e/nm². May
+ * import {@code quantity}.
  */
 package beamwarden.physics;
