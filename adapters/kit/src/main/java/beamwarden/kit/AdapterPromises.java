@@ -116,10 +116,10 @@ public abstract class AdapterPromises {
     try (Rig rig = rig()) {
       trial = new Trial(promise, rig);
       proof.accept(trial);
-      trial.checkOrder();
+      trial.verdict().requireOrder();
     }
-    if (!trial.notShown().isEmpty()) {
-      String what = promise + ", is not shown: " + String.join("; ", trial.notShown());
+    if (!trial.verdict().notShown().isEmpty()) {
+      String what = promise + ", is not shown: " + String.join("; ", trial.verdict().notShown());
       if (showsEverything()) {
         Assertions.fail(what);
       }

@@ -24,8 +24,7 @@ final class ExposingPromises {
   private ExposingPromises() {}
 
   static void p01(Trial trial) {
-    if (trial.rig().truth().isEmpty()) {
-      trial.notShown("there is no independent record of what was delivered");
+    if (!trial.evidence().isRecorded()) {
       return;
     }
     Exposure exposure = trial.exposures().shortOne();
@@ -43,7 +42,7 @@ final class ExposingPromises {
             });
     trial.instrument().windDown();
     trial.pass(trial.beats(10));
-    List<Stretch> truth = trial.rig().truth().orElseThrow();
+    List<Stretch> truth = trial.evidence().all();
     trial.require(!truth.isEmpty(), "the record shows no beam at all, so that it proves nothing");
     truth.forEach(stretch -> granted(trial, stretch));
   }
@@ -81,7 +80,7 @@ final class ExposingPromises {
     trial.awaitEnded(third);
     trial.instrument().begin(second);
     trial.pass(exposure.scan().duration().plus(trial.beats(5)));
-    trial.checkOrder();
+    trial.verdict().requireOrder();
     List.of(first, second, third).forEach(grant -> exposedOnce(trial, grant));
     List<Instant> ends =
         List.of(first, second, third).stream().map(g -> trial.awaitEnded(g).at()).toList();
@@ -90,10 +89,10 @@ final class ExposingPromises {
   }
 
   private static void exposedOnce(Trial trial, Grant grant) {
-    double seconds = trial.stretches(grant).stream().mapToDouble(Stretch::beamOnSeconds).sum();
+    double seconds = trial.evidence().beamOnSeconds(grant);
     trial.require(
         seconds <= seconds(grant.exposure().scan().duration()) * (1 + ROUNDING),
-        "a grant that was sent again sent electrons again: " + trial.stretches(grant));
+        "a grant that was sent again sent electrons again: " + trial.evidence().under(grant));
   }
 
   static void p03(Trial trial) {
@@ -117,13 +116,13 @@ final class ExposingPromises {
     boolean told =
         trial.recorder().first(0, Begun.class, e -> e.grant() == grant.number()).isPresent();
     trial.require(
-        !(fate instanceof GrantFate.NeverBegun) || (!told && trial.stretches(grant).isEmpty()),
+        !(fate instanceof GrantFate.NeverBegun)
+            || (!told && trial.evidence().under(grant).isEmpty()),
         "after a crash, an exposure that had begun was said never to have begun");
   }
 
   static void p04(Trial trial) {
-    if (trial.rig().truth().isEmpty()) {
-      trial.notShown("there is no independent record of what was delivered");
+    if (!trial.evidence().isRecorded()) {
       return;
     }
     trial.connect();
@@ -150,11 +149,13 @@ final class ExposingPromises {
                 trial.beats(40))
             .event();
     if (answer instanceof NotBegun refusal) {
-      trial.notShown("a grant of too short a time is refused: " + refusal.fault().message());
+      trial
+          .verdict()
+          .notShown("a grant of too short a time is refused: " + refusal.fault().message());
       return;
     }
     Receipt receipt = trial.awaitEnded(grant).event().receipt();
-    double seconds = trial.stretches(grant).stream().mapToDouble(Stretch::beamOnSeconds).sum();
+    double seconds = trial.evidence().beamOnSeconds(grant);
     trial.require(
         seconds <= seconds(half) * (1 + ROUNDING),
         "the beam was on for " + seconds + " s under a grant of " + half);
@@ -166,11 +167,10 @@ final class ExposingPromises {
   static void p05(Trial trial) {
     Exposure exposure = trial.exposures().longOne();
     trial.ready(exposure);
-    Grant grant = trial.begun(trial.draft(exposure));
-    trial.passInto(grant, 0.25);
-    if (!trial.provoke(trial.rig().raiseCurrent(), "too high a current")) {
+    if (!trial.verdict().provoked(trial.rig().currentRises(), "too high a current")) {
       return;
     }
+    Grant grant = trial.begun(trial.draft(exposure));
     Receipt receipt = trial.awaitEnded(grant).event().receipt();
     trial.require(
         receipt.fault().map(f -> f.kind() == FaultKind.CURRENT_OUT_OF_BOUNDS).orElse(false),
@@ -208,7 +208,7 @@ final class ExposingPromises {
         "a stop at the boundary left a line half done: " + receipt);
     trial.await(0, NotBegun.class, e -> e.grant() == waiting.number(), trial.beats(20));
     trial.pass(raster.scan().duration());
-    trial.neverBegan(waiting, "it had not started when the stop came");
+    trial.evidence().neverBegan(waiting, "it had not started when the stop came");
   }
 
   private static Receipt endsEarly(Trial trial, Grant grant, Instant latest) {
@@ -216,7 +216,7 @@ final class ExposingPromises {
     trial.require(
         !receipt.complete(grant.exposure().scan().units()),
         "an exposure that was asked to stop went on to its end");
-    trial.dark(grant, latest, "it was asked to stop");
+    trial.evidence().dark(grant, latest, "it was asked to stop");
     return receipt;
   }
 

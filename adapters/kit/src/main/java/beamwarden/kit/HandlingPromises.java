@@ -40,11 +40,8 @@ final class HandlingPromises {
         "a voltage beyond the column's reach was read back as reached");
     trial.pass(trial.beats(10));
     trial.require(
-        trial.rig().truth().stream().allMatch(stretches -> stretches.isEmpty()),
-        "preparing or measuring sent electrons to the sample: " + trial.rig().truth());
-    if (trial.rig().truth().isEmpty()) {
-      trial.notShown("there is no independent record of what preparing delivers");
-    }
+        !trial.evidence().isRecorded() || trial.evidence().all().isEmpty(),
+        "preparing or measuring sent electrons to the sample: " + trial.evidence().all());
   }
 
   private static void near(Trial trial, Conditions asked, Conditions read) {
@@ -89,7 +86,7 @@ final class HandlingPromises {
     end.run();
     Instant ended = trial.now();
     trial.pass(exposure.scan().duration());
-    trial.dark(grant, ended.plus(trial.beats(1)), because);
+    trial.evidence().dark(grant, ended.plus(trial.beats(1)), because);
     trial.restart();
     trial.require(
         !(trial.fate(grant) instanceof GrantFate.NeverBegun),
@@ -103,7 +100,7 @@ final class HandlingPromises {
     trial.require(
         trial.session().equals(before),
         "a restart changed the session from " + before + " to " + trial.session());
-    if (!trial.provoke(trial.rig().openDoor(), "an opened door")) {
+    if (!trial.verdict().provoked(trial.rig().doorOpens(), "an opened door")) {
       return;
     }
     trial.restart();
@@ -127,7 +124,7 @@ final class HandlingPromises {
         readings.beamBlanked() && readings.valveClosed(),
         "after winding down the readings are " + readings);
     trial.pass(exposure.scan().duration());
-    trial.dark(grant, answer.at(), "the instrument was wound down");
+    trial.evidence().dark(grant, answer.at(), "the instrument was wound down");
     trial.require(
         !(trial.fate(grant) instanceof GrantFate.NeverBegun),
         "an exposure that was ended by winding down was said never to have begun");

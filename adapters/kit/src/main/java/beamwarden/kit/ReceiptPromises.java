@@ -23,8 +23,7 @@ final class ReceiptPromises {
   private ReceiptPromises() {}
 
   static void p13(Trial trial) {
-    if (trial.rig().truth().isEmpty()) {
-      trial.notShown("there is no independent record of what was delivered");
+    if (!trial.evidence().isRecorded()) {
       return;
     }
     Exposure exposure = trial.exposures().longOne();
@@ -55,11 +54,12 @@ final class ReceiptPromises {
         receipt.complete(exposure.scan().units()),
         "an undisturbed exposure ended early: " + receipt);
     noSmaller(trial, grant, receipt);
-    trial.require(!trial.stretches(grant).isEmpty(), "the record does not show a whole exposure");
+    trial.require(
+        !trial.evidence().under(grant).isEmpty(), "the record does not show a whole exposure");
   }
 
   private static void noSmaller(Trial trial, Grant grant, Receipt receipt) {
-    List<Stretch> truth = trial.stretches(grant);
+    List<Stretch> truth = trial.evidence().under(grant);
     double beamOn = truth.stream().mapToDouble(Stretch::beamOnSeconds).sum();
     trial.require(
         beamOn <= receipt.beamOn().toNanos() / 1e9 * (1 + ROUNDING_SECONDS) + ROUNDING_SECONDS,
@@ -87,7 +87,7 @@ final class ReceiptPromises {
     trial.ready(exposure);
     Receipt receipt = trial.exposed(exposure);
     if (receipt.files().isEmpty()) {
-      trial.notShown("the receipt names no data file");
+      trial.verdict().notShown("the receipt names no data file");
       return;
     }
     receipt.files().forEach(file -> isWhole(trial, file));

@@ -65,14 +65,20 @@ public interface Rig extends AutoCloseable {
     instrument().close();
   }
 
-  /** Opens the chamber's door and closes it again. */
-  Provocation openDoor();
+  /** Opens the chamber's door and closes it again; the adapter may be restarted meanwhile. */
+  Provocation doorOpens();
 
-  /** From now on twice the wished current flows. */
-  Provocation raiseCurrent();
+  /**
+   * Sees to it that during the exposure that begins next, in its first half, the current rises to
+   * twice what was wished.
+   */
+  Provocation currentRises();
 
-  /** Cuts the connection to the adapter, which lives on; {@code connect} brings it back. */
-  Provocation cutConnection();
+  /**
+   * Sees to it that during the exposure that begins next, in its first quarter, the connection to
+   * the adapter breaks. The adapter lives on, and {@code connect} brings the connection back.
+   */
+  Provocation connectionBreaks();
 
   /**
    * The stretches of beam that have ended so far, from a record that does not come from the

@@ -23,8 +23,8 @@ final class SealPromises {
     trial.passInto(running, 0.3);
     Heard<Sealed> sealed = trial.seal(running.number(), waiting.number());
     trial.pass(exposure.scan().duration().multipliedBy(2));
-    trial.dark(running, sealed.at(), "the seal had been answered");
-    trial.neverBegan(waiting, "a seal forbade it");
+    trial.evidence().dark(running, sealed.at(), "the seal had been answered");
+    trial.evidence().neverBegan(waiting, "a seal forbade it");
     trial.require(
         !(sealed.event().report().fates().get(running.number()) instanceof GrantFate.NeverBegun),
         "an exposure that a seal ended was said never to have begun");

@@ -5,6 +5,7 @@ import beamwarden.instrument.FaultKind;
 import beamwarden.instrument.Grant;
 import beamwarden.instrument.GrantFate;
 import beamwarden.instrument.InstrumentEvent.Ended;
+import beamwarden.instrument.InstrumentEvent.Lost;
 import beamwarden.instrument.InstrumentEvent.NotBegun;
 import beamwarden.instrument.Receipt;
 import java.time.Duration;
@@ -26,7 +27,7 @@ final class StartingPromises {
     trial.require(
         receipt.fault().map(f -> f.kind() == FaultKind.LEASE_ENDED).orElse(false),
         "without a heartbeat an exposure ended with " + receipt.fault());
-    trial.dark(grant, seen.plus(lease).plus(trial.beats(1)), "its lease had ended");
+    trial.evidence().dark(grant, seen.plus(lease).plus(trial.beats(1)), "its lease had ended");
     alone(trial, exposure, lease);
   }
 
@@ -47,16 +48,18 @@ final class StartingPromises {
   }
 
   private static void alone(Trial trial, Exposure exposure, Duration lease) {
+    if (!trial.verdict().provoked(trial.rig().connectionBreaks(), "a lost connection")) {
+      return;
+    }
+    int mark = trial.recorder().mark();
     Draft draft = trial.draft(exposure).lease(lease);
     Instant seen = trial.now();
     Grant grant = trial.begun(draft);
-    if (!trial.provoke(trial.rig().cutConnection(), "a lost connection")) {
-      return;
-    }
+    trial.await(mark, Lost.class, e -> true, exposure.scan().duration());
     trial.pass(lease.plus(exposure.scan().duration()));
     trial.connect();
     GrantFate fate = trial.fate(grant);
-    trial.dark(grant, seen.plus(lease).plus(trial.beats(1)), "its lease ended unheard");
+    trial.evidence().dark(grant, seen.plus(lease).plus(trial.beats(1)), "its lease ended unheard");
     trial.require(
         !(fate instanceof GrantFate.NeverBegun),
         "an exposure that ran without a connection was said never to have begun");
@@ -78,7 +81,7 @@ final class StartingPromises {
     trial.awaitEnded(running);
     trial.await(0, NotBegun.class, e -> e.grant() == waiting.number(), trial.beats(20));
     trial.pass(trial.beats(10));
-    trial.neverBegan(waiting, "its latest start passed while another exposure ran");
+    trial.evidence().neverBegan(waiting, "its latest start passed while another exposure ran");
   }
 
   static void p09(Trial trial) {

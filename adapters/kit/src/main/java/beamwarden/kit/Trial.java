@@ -10,7 +10,6 @@ import beamwarden.instrument.InstrumentEvent.Connected;
 import beamwarden.instrument.InstrumentEvent.Ended;
 import beamwarden.instrument.InstrumentEvent.HeartbeatSeen;
 import beamwarden.instrument.InstrumentEvent.Measured;
-import beamwarden.instrument.InstrumentEvent.NotBegun;
 import beamwarden.instrument.InstrumentEvent.NotMeasured;
 import beamwarden.instrument.InstrumentEvent.NotPrepared;
 import beamwarden.instrument.InstrumentEvent.Prepared;
@@ -21,10 +20,7 @@ import beamwarden.instrument.SealReport;
 import beamwarden.kit.Recorder.Heard;
 import java.time.Duration;
 import java.time.Instant;
-import java.util.ArrayList;
-import java.util.List;
 import java.util.Optional;
-import java.util.OptionalLong;
 import java.util.Set;
 import java.util.function.Predicate;
 
@@ -32,13 +28,12 @@ import java.util.function.Predicate;
 final class Trial {
   static final String STORE = "store-of-the-suite";
   static final String OTHER_STORE = "store-of-a-stranger";
-  private static final int TOLD_EVENTS = 8;
 
-  private final Promise promise;
   private final Rig rig;
   private final Recorder recorder;
   private final Exposures exposures;
-  private final List<String> notShown = new ArrayList<>();
+  private final Verdict verdict;
+  private final Evidence evidence;
   private String session = "";
   private long fence;
   private long heartbeats;
@@ -46,10 +41,11 @@ final class Trial {
   private long requests;
 
   Trial(Promise promise, Rig rig) {
-    this.promise = promise;
     this.rig = rig;
     this.recorder = new Recorder(rig.time());
     this.exposures = new Exposures(rig);
+    this.verdict = new Verdict(promise, recorder);
+    this.evidence = new Evidence(rig, recorder, verdict);
   }
 
   Rig rig() {
@@ -62,6 +58,14 @@ final class Trial {
 
   Exposures exposures() {
     return exposures;
+  }
+
+  Verdict verdict() {
+    return verdict;
+  }
+
+  Evidence evidence() {
+    return evidence;
   }
 
   long fence() {
@@ -211,51 +215,10 @@ final class Trial {
   /** Begins a grant that must be refused. */
   void refuses(Draft draft, String because) {
     Grant grant = draft.grant();
-    int mark = recorder.mark();
     instrument().begin(grant);
-    rig.time().until(() -> answered(mark, grant), beats(20));
-    neverBegan(grant, because);
-    require(
-        recorder.first(mark, NotBegun.class, e -> e.grant() == grant.number()).isPresent(),
-        "a grant was neither begun nor refused (" + because + ")");
-  }
-
-  private boolean answered(int mark, Grant grant) {
-    return recorder.first(mark, NotBegun.class, e -> e.grant() == grant.number()).isPresent()
-        || recorder.first(mark, Begun.class, e -> e.grant() == grant.number()).isPresent();
-  }
-
-  /** Holds it against the adapter when a grant has begun or sent an electron. */
-  void neverBegan(Grant grant, String because) {
-    require(
-        recorder.first(0, Begun.class, e -> e.grant() == grant.number()).isEmpty(),
-        "a grant began that must not (" + because + ")");
-    require(
-        stretches(grant).isEmpty(), "electrons were sent under a refused grant (" + because + ")");
-  }
-
-  /** The stretches under a grant; none when there is no record. */
-  List<Stretch> stretches(Grant grant) {
-    OptionalLong number = OptionalLong.of(grant.number());
-    return rig.truth().stream()
-        .flatMap(List::stream)
-        .filter(stretch -> stretch.grant().equals(number))
-        .toList();
-  }
-
-  /** Holds it against the adapter when the record shows beam under a grant after a moment. */
-  void dark(Grant grant, Instant after, String because) {
-    for (Stretch stretch : stretches(grant)) {
-      require(
-          !stretch.ended().isAfter(after),
-          "the beam was on until "
-              + stretch.ended()
-              + ", and should have been off by "
-              + after
-              + " ("
-              + because
-              + ")");
-    }
+    rig.time().until(() -> evidence.toldRefused(grant) || evidence.toldBegun(grant), beats(20));
+    evidence.neverBegan(grant, because);
+    require(evidence.toldRefused(grant), "a grant was neither begun nor refused (" + because + ")");
   }
 
   /** Asks and waits for the answer, which must come. */
@@ -270,53 +233,13 @@ final class Trial {
       int mark, Class<E> kind, Predicate<E> wished, Duration atMost) {
     Optional<Heard<E>> heard = recorder.await(mark, kind, wished, atMost);
     if (heard.isEmpty()) {
-      checkOrder();
-      throw broken("no " + kind.getSimpleName() + " came within " + atMost);
+      verdict.requireOrder();
+      throw verdict.broken("no " + kind.getSimpleName() + " came within " + atMost);
     }
     return heard.get();
   }
 
   void require(boolean kept, String otherwise) {
-    if (!kept) {
-      throw broken(otherwise);
-    }
-  }
-
-  /** Makes a fault; false when this rig cannot, which is then reported. */
-  boolean provoke(Provocation provocation, String what) {
-    provocation
-        .act()
-        .ifPresentOrElse(
-            Runnable::run, () -> notShown(what + " cannot be provoked: " + provocation.whyNot()));
-    return provocation.act().isPresent();
-  }
-
-  void notShown(String why) {
-    notShown.add(why);
-  }
-
-  /** What could not be tried. */
-  List<String> notShown() {
-    return List.copyOf(notShown);
-  }
-
-  /** Looks at the order of all events once more. */
-  void checkOrder() {
-    List<InstrumentEvent> events = new ArrayList<>();
-    recorder.heard().forEach(heard -> events.add(heard.event()));
-    EventOrder.broken(events)
-        .ifPresent(
-            what -> {
-              throw broken(what);
-            });
-  }
-
-  private AssertionError broken(String what) {
-    List<Heard<?>> heard = recorder.heard();
-    StringBuilder told = new StringBuilder(promise + ": " + what + ". Last heard:");
-    heard
-        .subList(Math.max(0, heard.size() - TOLD_EVENTS), heard.size())
-        .forEach(one -> told.append("\n  ").append(one.at()).append(' ').append(one.event()));
-    return new AssertionError(told.toString());
+    verdict.require(kept, otherwise);
   }
 }

@@ -28,6 +28,7 @@ final class PlainHardware {
   private Optional<Conditions> conditions = Optional.empty();
   private Point stage = new Point(0, 0);
   private boolean valveClosed;
+  private Runnable mishapInNextExposure = () -> {};
 
   PlainHardware(Timeline time) {
     this.time = time;
@@ -39,6 +40,11 @@ final class PlainHardware {
 
   void openDoor() {
     doorsOpened++;
+  }
+
+  /** Does something shortly after the beam has come on the next time. */
+  void inNextExposure(Runnable mishap) {
+    mishapInNextExposure = mishap;
   }
 
   void raiseCurrent() {
@@ -84,6 +90,8 @@ final class PlainHardware {
     counted = began;
     electrons = 0;
     highestFactor = currentFactor;
+    time.after(Duration.ofMillis(150), mishapInNextExposure);
+    mishapInNextExposure = () -> {};
   }
 
   Duration sinceUnblanked() {

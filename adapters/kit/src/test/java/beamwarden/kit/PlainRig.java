@@ -99,18 +99,18 @@ final class PlainRig implements Rig {
   }
 
   @Override
-  public Provocation openDoor() {
+  public Provocation doorOpens() {
     return Provocation.by(hardware::openDoor);
   }
 
   @Override
-  public Provocation raiseCurrent() {
-    return Provocation.by(hardware::raiseCurrent);
+  public Provocation currentRises() {
+    return Provocation.by(() -> hardware.inNextExposure(hardware::raiseCurrent));
   }
 
   @Override
-  public Provocation cutConnection() {
-    return Provocation.by(() -> instrument.cut());
+  public Provocation connectionBreaks() {
+    return Provocation.by(() -> hardware.inNextExposure(instrument::cut));
   }
 
   @Override
