@@ -116,6 +116,7 @@ public abstract class AdapterPromises {
     try (Rig rig = rig()) {
       trial = new Trial(promise, rig);
       proof.accept(trial);
+      trial.evidence().lookAgain();
       trial.verdict().requireOrder();
     }
     if (!trial.verdict().notShown().isEmpty()) {

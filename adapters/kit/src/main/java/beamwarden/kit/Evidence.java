@@ -4,6 +4,7 @@ import beamwarden.instrument.Grant;
 import beamwarden.instrument.InstrumentEvent.Begun;
 import beamwarden.instrument.InstrumentEvent.NotBegun;
 import java.time.Instant;
+import java.util.ArrayList;
 import java.util.List;
 import java.util.OptionalLong;
 
@@ -12,6 +13,7 @@ final class Evidence {
   private final Rig rig;
   private final Recorder recorder;
   private final Verdict verdict;
+  private final List<Runnable> demands = new ArrayList<>();
 
   Evidence(Rig rig, Recorder recorder, Verdict verdict) {
     this.rig = rig;
@@ -53,16 +55,42 @@ final class Evidence {
     return recorder.first(0, NotBegun.class, e -> e.grant() == grant.number()).isPresent();
   }
 
-  /** Fails when a grant has begun or sent an electron. */
+  /** Fails when a grant has begun or sent an electron, by now or by the end of the trial. */
   void neverBegan(Grant grant, String because) {
+    demand(() -> requireNeverBegun(grant, because));
+  }
+
+  private void requireNeverBegun(Grant grant, String because) {
     verdict.require(!toldBegun(grant), "a grant began that must not (" + because + ")");
     verdict.require(
         under(grant).isEmpty(),
         "electrons were sent under a grant that must not (" + because + ")");
   }
 
-  /** Fails when the record shows beam under a grant after a moment. */
+  /**
+   * Fails when the record shows beam under a grant after a moment, by now or by the end of the
+   * trial.
+   */
   void dark(Grant grant, Instant after, String because) {
+    demand(() -> requireDark(grant, after, because));
+  }
+
+  /** Ends the adapter and looks at everything again: beam that was on all the time shows now. */
+  void lookAgain() {
+    if (rig.truth().isPresent()) {
+      rig.endInOrder();
+      rig.time().pass(rig.beat());
+    }
+    demands.forEach(Runnable::run);
+  }
+
+  /** Fails unless something holds, now and at the end of the trial. */
+  void demand(Runnable demand) {
+    demand.run();
+    demands.add(demand);
+  }
+
+  private void requireDark(Grant grant, Instant after, String because) {
     for (Stretch stretch : under(grant)) {
       verdict.require(
           !stretch.ended().isAfter(after),

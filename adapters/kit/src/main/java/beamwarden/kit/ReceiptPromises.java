@@ -7,7 +7,6 @@ import beamwarden.instrument.Grant;
 import beamwarden.instrument.GrantFate;
 import beamwarden.instrument.Receipt;
 import java.io.IOException;
-import java.io.UncheckedIOException;
 import java.nio.file.Files;
 import java.security.MessageDigest;
 import java.security.NoSuchAlgorithmException;
@@ -31,11 +30,11 @@ final class ReceiptPromises {
     runsToItsEnd(trial, exposure);
     Duration part = exposure.scan().beamOn().multipliedBy(3).dividedBy(10);
     Grant cut = trial.begun(trial.draft(exposure).longestBeamOn(part));
-    noSmaller(trial, cut, trial.awaitEnded(cut).event().receipt());
+    demandNoSmaller(trial, cut, trial.awaitEnded(cut).event().receipt());
     Grant sealed = trial.begun(trial.draft(exposure));
     trial.passInto(sealed, 0.55);
     if (trial.fate(sealed) instanceof GrantFate.Reported reported) {
-      noSmaller(trial, sealed, reported.receipt());
+      demandNoSmaller(trial, sealed, reported.receipt());
     }
     trial
         .exposures()
@@ -53,14 +52,18 @@ final class ReceiptPromises {
     trial.require(
         receipt.complete(exposure.scan().units()),
         "an undisturbed exposure ended early: " + receipt);
-    noSmaller(trial, grant, receipt);
+    demandNoSmaller(trial, grant, receipt);
     trial.require(
         !trial.evidence().under(grant).isEmpty(), "the record does not show a whole exposure");
   }
 
+  private static void demandNoSmaller(Trial trial, Grant grant, Receipt receipt) {
+    trial.evidence().demand(() -> noSmaller(trial, grant, receipt));
+  }
+
   private static void noSmaller(Trial trial, Grant grant, Receipt receipt) {
     List<Stretch> truth = trial.evidence().under(grant);
-    double beamOn = truth.stream().mapToDouble(Stretch::beamOnSeconds).sum();
+    double beamOn = trial.evidence().beamOnSeconds(grant);
     trial.require(
         beamOn <= receipt.beamOn().toNanos() / 1e9 * (1 + ROUNDING_SECONDS) + ROUNDING_SECONDS,
         "a receipt of " + receipt.beamOn() + " hides a beam that was on for " + beamOn + " s");
@@ -102,7 +105,7 @@ final class ReceiptPromises {
           content.length == file.bytes() && sha256(content).equals(file.sha256()),
           "the data file " + file.path() + " is not what its receipt says");
     } catch (IOException e) {
-      throw new UncheckedIOException("P14: a receipt names a data file that cannot be read", e);
+      throw trial.verdict().broken("the data file " + file.path() + " cannot be read: " + e);
     }
   }
 

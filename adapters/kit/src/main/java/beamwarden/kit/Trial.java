@@ -217,6 +217,11 @@ final class Trial {
     Grant grant = draft.grant();
     instrument().begin(grant);
     rig.time().until(() -> evidence.toldRefused(grant) || evidence.toldBegun(grant), beats(20));
+    staysRefused(grant, because);
+  }
+
+  /** Holds it against the adapter when a grant has begun, or was not answered. */
+  void staysRefused(Grant grant, String because) {
     evidence.neverBegan(grant, because);
     require(evidence.toldRefused(grant), "a grant was neither begun nor refused (" + because + ")");
   }

@@ -1,5 +1,9 @@
 package beamwarden.kit;
 
+import beamwarden.beam.Conditions;
+import beamwarden.beam.Point;
+import beamwarden.instrument.CurrentReading;
+import beamwarden.instrument.DataFile;
 import beamwarden.instrument.Fault;
 import beamwarden.instrument.Grant;
 import beamwarden.instrument.GrantFate;
@@ -8,93 +12,354 @@ import beamwarden.instrument.StopWhen;
 import java.time.Duration;
 import java.util.List;
 import java.util.Optional;
+import java.util.OptionalLong;
 import java.util.Set;
 
 /** Adapters that are honest but for one thing. */
 final class BadInstruments {
+  private static final Duration A_WHILE = Duration.ofMillis(100);
+  private static int processes;
+
   private BadInstruments() {}
 
-  /** Goes on without a heartbeat. */
-  static final class NoLease extends PlainInstrument {
-    NoLease(PlainRig rig) {
-      super(rig);
-    }
-
-    @Override
-    boolean leaseEnded(Grant grant) {
-      return false;
-    }
+  static PlainInstrument hasNoLease(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      boolean leaseEnded(Grant grant) {
+        return false;
+      }
+    };
   }
 
-  /** Answers a seal, and some time later starts what it had been given before. */
-  static final class StartsSealedGrantLate extends PlainInstrument {
-    StartsSealedGrantLate(PlainRig rig) {
-      super(rig);
-    }
-
-    @Override
-    public void seal(long fence, String store, Set<Long> grants, boolean handOver) {
-      List<Grant> kept = List.copyOf(waiting);
-      waiting.clear();
-      super.seal(fence, store, grants, handOver);
-      kept.forEach(grant -> later(Duration.ofMillis(100), () -> start(grant)));
-    }
+  static PlainInstrument startsASealedGrantLate(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      public void seal(long fence, String store, Set<Long> grants, boolean handOver) {
+        List<Grant> kept = List.copyOf(waiting);
+        waiting.clear();
+        super.seal(fence, store, grants, handOver);
+        kept.forEach(grant -> later(A_WHILE, () -> start(grant)));
+      }
+    };
   }
 
-  /** Takes a grant that is sent again for a new one. */
-  static final class ExposesTwice extends PlainInstrument {
-    ExposesTwice(PlainRig rig) {
-      super(rig);
-    }
-
-    @Override
-    boolean knows(Grant grant) {
-      return false;
-    }
+  static PlainInstrument exposesTwice(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      boolean knows(Grant grant) {
+        return false;
+      }
+    };
   }
 
-  /** Takes what it does not know for nothing. */
-  static final class SaysZeroForUnknown extends PlainInstrument {
-    SaysZeroForUnknown(PlainRig rig) {
-      super(rig);
-    }
-
-    @Override
-    GrantFate unknown() {
-      return new GrantFate.NeverBegun();
-    }
+  static PlainInstrument saysNeverBegunForUnknown(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      GrantFate unknown() {
+        return new GrantFate.NeverBegun();
+      }
+    };
   }
 
-  /** Has no ear for a stop. */
-  static final class IgnoresTheStop extends PlainInstrument {
-    IgnoresTheStop(PlainRig rig) {
-      super(rig);
-    }
-
-    @Override
-    public void stop(StopWhen when) {}
+  static PlainInstrument ignoresTheStop(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      public void stop(StopWhen when) {}
+    };
   }
 
-  /** Reports nine tenths of the time. */
-  static final class SmallReceipt extends PlainInstrument {
-    SmallReceipt(PlainRig rig) {
-      super(rig);
-    }
+  static PlainInstrument reportsLessTime(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      Receipt receipt(Grant grant, Duration beamOn, Optional<Fault> fault) {
+        Receipt honest = super.receipt(grant, beamOn, fault);
+        Duration less = beamOn.multipliedBy(9).dividedBy(10);
+        return changed(honest, honest.unitsTouched(), less, honest.highestCurrent());
+      }
+    };
+  }
 
-    @Override
-    Receipt receipt(Grant grant, Duration beamOn, Optional<Fault> fault) {
-      Receipt honest = super.receipt(grant, beamOn, fault);
-      return new Receipt(
-          honest.grant(),
-          honest.fence(),
-          honest.unitsDone(),
-          honest.unitsTouched(),
-          beamOn.multipliedBy(9).dividedBy(10),
-          honest.lowestCurrent(),
-          honest.highestCurrent(),
-          honest.counts(),
-          honest.files(),
-          honest.fault());
-    }
+  static PlainInstrument reportsFewerUnits(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      Receipt receipt(Grant grant, Duration beamOn, Optional<Fault> fault) {
+        Receipt honest = super.receipt(grant, beamOn, fault);
+        return changed(honest, honest.unitsDone(), honest.beamOn(), honest.highestCurrent());
+      }
+    };
+  }
+
+  static PlainInstrument reportsLessCurrent(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      Receipt receipt(Grant grant, Duration beamOn, Optional<Fault> fault) {
+        Receipt honest = super.receipt(grant, beamOn, fault);
+        Optional<CurrentReading> less =
+            honest
+                .highestCurrent()
+                .map(high -> new CurrentReading(high.settings(), high.current().times(0.9)));
+        return changed(honest, honest.unitsTouched(), honest.beamOn(), less);
+      }
+    };
+  }
+
+  private static Receipt changed(
+      Receipt honest, long touched, Duration beamOn, Optional<CurrentReading> highest) {
+    return new Receipt(
+        honest.grant(),
+        honest.fence(),
+        honest.unitsDone(),
+        touched,
+        beamOn,
+        honest.lowestCurrent(),
+        highest,
+        honest.counts(),
+        honest.files(),
+        honest.fault());
+  }
+
+  static PlainInstrument letsStrayBeamThrough(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      void end(Optional<Fault> fault) {
+        running.ifPresent(grant -> hardware.strayBeam(OptionalLong.empty(), Duration.ofMillis(1)));
+        super.end(fault);
+      }
+    };
+  }
+
+  static PlainInstrument exposesTwiceInSilence(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      void end(Optional<Fault> fault) {
+        Duration again = hardware.sinceUnblanked();
+        running.ifPresent(grant -> hardware.strayBeam(OptionalLong.of(grant.number()), again));
+        super.end(fault);
+      }
+    };
+  }
+
+  static PlainInstrument takesTheLastFirst(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      void startNext() {
+        if (!waiting.isEmpty()) {
+          waiting.addFirst(waiting.pollLast());
+        }
+        super.startNext();
+      }
+    };
+  }
+
+  static PlainInstrument notesAfterwards(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      void noteBegun(Grant grant) {}
+
+      @Override
+      void keep(Grant grant, Receipt receipt) {
+        super.noteBegun(grant);
+        super.keep(grant, receipt);
+      }
+
+      @Override
+      boolean knows(Grant grant) {
+        return super.knows(grant) || running.equals(Optional.of(grant));
+      }
+    };
+  }
+
+  static PlainInstrument ignoresTheGrantsTime(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      Duration mostBeamOn(Grant grant) {
+        return grant.exposure().scan().duration();
+      }
+    };
+  }
+
+  static PlainInstrument blanksTooLate(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      Duration mostBeamOn(Grant grant) {
+        Duration honest = super.mostBeamOn(grant);
+        boolean cut = honest.equals(grant.longestBeamOn());
+        return cut ? honest.plusMillis(1) : honest;
+      }
+    };
+  }
+
+  static PlainInstrument ignoresTheCurrent(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      boolean tooHigh(Grant grant) {
+        return false;
+      }
+    };
+  }
+
+  static PlainInstrument startsWhatWaitedForAStop(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      public void stop(StopWhen when) {
+        List<Grant> kept = List.copyOf(waiting);
+        waiting.clear();
+        super.stop(when);
+        waiting.addAll(kept);
+      }
+    };
+  }
+
+  static PlainInstrument stopsInTheMiddleOfALine(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      Duration toTheEnd(StopWhen when) {
+        return Duration.ZERO;
+      }
+    };
+  }
+
+  static PlainInstrument doesNotRenewTheLease(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      boolean leaseEnded(Grant grant) {
+        return hardware.sinceUnblanked().compareTo(grant.lease()) >= 0;
+      }
+    };
+  }
+
+  static PlainInstrument ignoresTheLatestStart(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      boolean inTime(Grant grant) {
+        return true;
+      }
+    };
+  }
+
+  static PlainInstrument ignoresTheFence(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      boolean ofFence(Grant grant) {
+        return true;
+      }
+    };
+  }
+
+  static PlainInstrument ignoresTheStore(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      boolean ofStore(Grant grant) {
+        return true;
+      }
+    };
+  }
+
+  static PlainInstrument ignoresTheSession(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      boolean ofSession(Grant grant) {
+        return true;
+      }
+    };
+  }
+
+  static PlainInstrument answersASealBeforeItBlanks(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      void endForSeal() {
+        running.ifPresent(grant -> later(A_WHILE, super::endForSeal));
+      }
+    };
+  }
+
+  static PlainInstrument isSealedByAnybody(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      boolean maySeal(long fence, String store, boolean handOver) {
+        return true;
+      }
+    };
+  }
+
+  static PlainInstrument forgetsReceiptsWithItsProcess(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      void die() {
+        notes.receipts.clear();
+        super.die();
+      }
+    };
+  }
+
+  static PlainInstrument writesItsDataLate(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      DataFile write(Grant grant) {
+        time.after(A_WHILE, () -> super.write(grant));
+        return new DataFile("/no/such/folder/1.txt", "text/plain", 1, "00");
+      }
+    };
+  }
+
+  static PlainInstrument preparesWithTheBeamOn(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      public void prepare(long request, Conditions conditions, Point stage) {
+        super.prepare(request, conditions, stage);
+        hardware.strayBeam(OptionalLong.empty(), Duration.ofMillis(1));
+      }
+    };
+  }
+
+  static PlainInstrument echoesWhatItIsAsked(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      boolean reaches(Conditions conditions) {
+        return true;
+      }
+    };
+  }
+
+  static PlainInstrument leavesTheBeamOnWhenClosed(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      void endForClose() {}
+    };
+  }
+
+  static PlainInstrument takesItsProcessForTheSession(PlainRig rig) {
+    String mine = "process-" + ++processes;
+    return new PlainInstrument(rig) {
+      @Override
+      String session() {
+        return mine;
+      }
+    };
+  }
+
+  static PlainInstrument doesNotSeeTheDoor(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      String session() {
+        return "always";
+      }
+    };
+  }
+
+  static PlainInstrument leavesTheValveOpen(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      void closeValve() {}
+    };
+  }
+
+  static PlainInstrument windsDownWithTheBeamOn(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      void endForWindDown() {
+        later(A_WHILE, super::endForWindDown);
+      }
+    };
   }
 }

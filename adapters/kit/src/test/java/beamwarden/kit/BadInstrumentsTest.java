@@ -2,42 +2,45 @@ package beamwarden.kit;
 
 import static org.junit.jupiter.api.Assertions.assertEquals;
 import static org.junit.jupiter.api.Assertions.assertTrue;
+import static org.junit.jupiter.params.provider.Arguments.arguments;
 
-import java.nio.file.Path;
 import java.util.Map;
 import java.util.Set;
 import java.util.function.Function;
+import java.util.stream.Stream;
 import org.junit.jupiter.api.Test;
-import org.junit.jupiter.api.io.TempDir;
+import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.Arguments;
+import org.junit.jupiter.params.provider.MethodSource;
 
-/** The suite finds the one promise that an adapter breaks, and nothing else. */
+/** The suite finds the promise that an adapter breaks, and nothing else. */
 class BadInstrumentsTest {
   private static final int PROMISES = 18;
 
   @Test
   void findsThatAnAdapterHasNoLease() {
-    fails(
-        NoLeaseSuite.class,
+    finds(
+        BadInstruments::hasNoLease,
         Map.of("P7", "without a heartbeat an exposure ended with Optional.empty"));
   }
 
   @Test
   void findsThatAnAdapterStartsASealedGrantLate() {
-    fails(
-        SealedGrantLateSuite.class,
+    finds(
+        BadInstruments::startsASealedGrantLate,
         Map.of("P10", "a grant began that must not (a seal forbade it)"));
   }
 
   @Test
   void findsThatAnAdapterExposesTwice() {
-    fails(ExposesTwiceSuite.class, Map.of("P2", "began twice"));
+    finds(BadInstruments::exposesTwice, Map.of("P2", "grant 1 began twice"));
   }
 
   @Test
   void findsThatAnAdapterSaysNeverBegunForUnknown() {
     // Whether nothing was noted (P3) or the note was passed over (P11) looks alike from outside.
-    fails(
-        ZeroForUnknownSuite.class,
+    finds(
+        BadInstruments::saysNeverBegunForUnknown,
         Map.of(
             "P3", "an exposure that had begun was said never to have begun",
             "P11", "an exposure that was acknowledged was said never to have begun"));
@@ -45,16 +48,63 @@ class BadInstrumentsTest {
 
   @Test
   void findsThatAnAdapterIgnoresTheStop() {
-    fails(IgnoresTheStopSuite.class, Map.of("P6", "asked to stop went on to its end"));
+    finds(BadInstruments::ignoresTheStop, Map.of("P6", "asked to stop went on to its end"));
   }
 
   @Test
   void findsThatAReceiptIsSmallerThanWhatWasDelivered() {
-    fails(SmallReceiptSuite.class, Map.of("P13", "hides a beam that was on for"));
+    finds(BadInstruments::reportsLessTime, Map.of("P13", "hides a beam that was on for"));
   }
 
-  private static void fails(Class<? extends AdapterPromises> suite, Map<String, String> broken) {
-    SuiteRun run = SuiteRun.of(suite);
+  @ParameterizedTest
+  @MethodSource("others")
+  void findsEachOtherWayToBreakAPromise(
+      Function<PlainRig, PlainInstrument> bad, Map<String, String> broken) {
+    finds(bad, broken);
+  }
+
+  static Stream<Arguments> others() {
+    return Stream.of(
+        bad(BadInstruments::letsStrayBeamThrough, Map.of("P1", "without a grant")),
+        bad(
+            BadInstruments::exposesTwiceInSilence,
+            Map.of("P2", "again", "P4", "on for", "P13", "hides")),
+        bad(BadInstruments::takesTheLastFirst, Map.of("P2", "in another order than begun")),
+        bad(BadInstruments::notesAfterwards, Map.of("P3", "never", "P11", "when the adapter died")),
+        bad(BadInstruments::ignoresTheGrantsTime, Map.of("P4", "the beam was on for")),
+        bad(BadInstruments::blanksTooLate, Map.of("P4", "the beam was on for")),
+        bad(BadInstruments::ignoresTheCurrent, Map.of("P5", "ended with Optional.empty")),
+        bad(BadInstruments::startsWhatWaitedForAStop, Map.of("P6", "when the stop came")),
+        bad(BadInstruments::stopsInTheMiddleOfALine, Map.of("P6", "left a line half done")),
+        bad(BadInstruments::doesNotRenewTheLease, Map.of("P7", "renewed in time has ended")),
+        bad(BadInstruments::ignoresTheLatestStart, Map.of("P8", "its latest start had passed")),
+        bad(BadInstruments::ignoresTheFence, Map.of("P9", "lower", "P10", "sealed away")),
+        bad(BadInstruments::ignoresTheStore, Map.of("P9", "it is of another store")),
+        bad(BadInstruments::ignoresTheSession, Map.of("P9", "it is of another session")),
+        bad(
+            BadInstruments::answersASealBeforeItBlanks,
+            Map.of("P10", "the seal had been answered")),
+        bad(BadInstruments::isSealedByAnybody, Map.of("P10", "in spite of a lower fence")),
+        bad(BadInstruments::forgetsReceiptsWithItsProcess, Map.of("P12", "a crash and a seal")),
+        bad(BadInstruments::reportsFewerUnits, Map.of("P13", "units hides")),
+        bad(BadInstruments::reportsLessCurrent, Map.of("P13", "A hides 350 pA")),
+        bad(BadInstruments::writesItsDataLate, Map.of("P14", "cannot be read")),
+        bad(BadInstruments::preparesWithTheBeamOn, Map.of("P1", "grant", "P15", "sent electrons")),
+        bad(BadInstruments::echoesWhatItIsAsked, Map.of("P15", "beyond the column's reach")),
+        bad(BadInstruments::leavesTheBeamOnWhenClosed, Map.of("P16", "the adapter was closed")),
+        bad(BadInstruments::takesItsProcessForTheSession, Map.of("P17", "a restart changed")),
+        bad(BadInstruments::doesNotSeeTheDoor, Map.of("P17", "an opened door left the session")),
+        bad(BadInstruments::leavesTheValveOpen, Map.of("P18", "valveClosed=false")),
+        bad(BadInstruments::windsDownWithTheBeamOn, Map.of("P18", "beamBlanked=false")));
+  }
+
+  private static Arguments bad(
+      Function<PlainRig, PlainInstrument> make, Map<String, String> broken) {
+    return arguments(make, broken);
+  }
+
+  private static void finds(Function<PlainRig, PlainInstrument> bad, Map<String, String> broken) {
+    SuiteRun run = SuiteRun.of(folder -> new PlainRig(bad, folder));
     assertEquals(broken.keySet(), run.failed.keySet(), () -> run.failed.toString());
     broken.forEach(
         (promise, why) -> {
@@ -63,55 +113,5 @@ class BadInstrumentsTest {
         });
     assertEquals(Set.of(), run.notShown.keySet());
     assertEquals(PROMISES, run.passed + broken.size());
-  }
-
-  abstract static class Suite extends AdapterPromises {
-    private final Function<PlainRig, PlainInstrument> make;
-    @TempDir Path folder;
-
-    Suite(Function<PlainRig, PlainInstrument> make) {
-      this.make = make;
-    }
-
-    @Override
-    protected Rig rig() {
-      return new PlainRig(make, folder);
-    }
-  }
-
-  static final class NoLeaseSuite extends Suite {
-    NoLeaseSuite() {
-      super(BadInstruments.NoLease::new);
-    }
-  }
-
-  static final class SealedGrantLateSuite extends Suite {
-    SealedGrantLateSuite() {
-      super(BadInstruments.StartsSealedGrantLate::new);
-    }
-  }
-
-  static final class ExposesTwiceSuite extends Suite {
-    ExposesTwiceSuite() {
-      super(BadInstruments.ExposesTwice::new);
-    }
-  }
-
-  static final class ZeroForUnknownSuite extends Suite {
-    ZeroForUnknownSuite() {
-      super(BadInstruments.SaysZeroForUnknown::new);
-    }
-  }
-
-  static final class IgnoresTheStopSuite extends Suite {
-    IgnoresTheStopSuite() {
-      super(BadInstruments.IgnoresTheStop::new);
-    }
-  }
-
-  static final class SmallReceiptSuite extends Suite {
-    SmallReceiptSuite() {
-      super(BadInstruments.SmallReceipt::new);
-    }
   }
 }

@@ -98,6 +98,13 @@ final class PlainHardware {
     return Duration.between(began, time.instant());
   }
 
+  /** Beam besides what was granted, up to now. */
+  void strayBeam(OptionalLong under, Duration time) {
+    Instant now = this.time.instant();
+    double sent = current().electronsIn(time);
+    delivered.add(new Stretch(under, now.minus(time), now, sent, current(), OptionalLong.empty()));
+  }
+
   /** Turns the beam off and tells how long it was on. */
   Duration blank() {
     count();

@@ -60,7 +60,11 @@ class PlainInstrument implements Instrument {
   @Override
   public void connect(InstrumentListener to) {
     listener = to;
-    tell(new InstrumentEvent.Connected(abilities, hardware.session(), readings()));
+    tell(new InstrumentEvent.Connected(abilities, session(), readings()));
+  }
+
+  String session() {
+    return hardware.session();
   }
 
   void cut() {
@@ -76,18 +80,26 @@ class PlainInstrument implements Instrument {
 
   @Override
   public void seal(long fence, String store, Set<Long> grants, boolean handOver) {
-    boolean foreign = !notes.store.isEmpty() && !notes.store.equals(store);
-    if (fence <= notes.fence || (foreign && !handOver)) {
+    if (!maySeal(fence, store, handOver)) {
       tell(new InstrumentEvent.SealRefused(notes.fence, notes.store));
       return;
     }
     notes.fence = fence;
     notes.store = store;
-    end(Optional.empty());
+    endForSeal();
     forbidWaiting();
     Map<Long, GrantFate> fates = new HashMap<>();
     grants.forEach(grant -> fates.put(grant, fate(PlainNotes.key(store, grant))));
     tell(new InstrumentEvent.Sealed(new SealReport(fence, store, fates)));
+  }
+
+  boolean maySeal(long fence, String store, boolean handOver) {
+    boolean foreign = !notes.store.isEmpty() && !notes.store.equals(store);
+    return fence > notes.fence && (!foreign || handOver);
+  }
+
+  void endForSeal() {
+    end(Optional.empty());
   }
 
   GrantFate fate(String key) {
@@ -109,7 +121,7 @@ class PlainInstrument implements Instrument {
 
   @Override
   public void prepare(long request, Conditions conditions, Point stage) {
-    if (conditions.beam().voltage().volts() > abilities.column().highestVoltage().volts()) {
+    if (!reaches(conditions)) {
       Fault fault = new Fault(FaultKind.NOT_OFFERED, "the column does not reach that voltage");
       tell(new InstrumentEvent.NotPrepared(request, fault));
       return;
@@ -118,6 +130,11 @@ class PlainInstrument implements Instrument {
     tell(
         new InstrumentEvent.Prepared(
             request, hardware.conditions().orElseThrow(), hardware.stage()));
+  }
+
+  boolean reaches(Conditions conditions) {
+    double volts = conditions.beam().voltage().volts();
+    return volts <= abilities.column().highestVoltage().volts();
   }
 
   @Override
@@ -156,19 +173,34 @@ class PlainInstrument implements Instrument {
   private Optional<FaultKind> forbidden(Grant grant) {
     boolean entitled =
         notes.fence > 0
-            && grant.fence() >= notes.fence
-            && grant.store().equals(notes.store)
-            && grant.session().equals(hardware.session())
+            && ofFence(grant)
+            && ofStore(grant)
+            && ofSession(grant)
             && hardware.conditions().equals(Optional.of(grant.exposure().conditions()));
-    Long seen = heartbeatNanos.get(grant.heartbeat());
-    boolean inTime = seen != null && time.elapsedNanos() - seen <= grant.latestStart().toNanos();
     if (!entitled) {
       return Optional.of(FaultKind.NOT_OFFERED);
     }
-    return inTime ? Optional.empty() : Optional.of(FaultKind.STARTED_TOO_LATE);
+    return inTime(grant) ? Optional.empty() : Optional.of(FaultKind.STARTED_TOO_LATE);
   }
 
-  private void refuse(Grant grant, FaultKind kind) {
+  boolean ofFence(Grant grant) {
+    return grant.fence() >= notes.fence;
+  }
+
+  boolean ofStore(Grant grant) {
+    return grant.store().equals(notes.store);
+  }
+
+  boolean ofSession(Grant grant) {
+    return grant.session().equals(session());
+  }
+
+  boolean inTime(Grant grant) {
+    Long seen = heartbeatNanos.get(grant.heartbeat());
+    return seen != null && time.elapsedNanos() - seen <= grant.latestStart().toNanos();
+  }
+
+  void refuse(Grant grant, FaultKind kind) {
     Fault fault = new Fault(kind, "the grant may not begin");
     tell(new InstrumentEvent.NotBegun(grant.number(), fault));
   }
@@ -176,13 +208,20 @@ class PlainInstrument implements Instrument {
   void start(Grant grant) {
     int mine = ++exposure;
     running = Optional.of(grant);
-    notes.begun.add(PlainNotes.key(grant.store(), grant.number()));
+    noteBegun(grant);
     tell(new InstrumentEvent.Begun(grant.number()));
     hardware.unblank(grant);
-    Duration scan = grant.exposure().scan().duration();
-    Duration most = grant.longestBeamOn().compareTo(scan) < 0 ? grant.longestBeamOn() : scan;
-    later(most, () -> endIfStill(mine, Optional.empty()));
+    later(mostBeamOn(grant), () -> endIfStill(mine, Optional.empty()));
     watch(mine);
+  }
+
+  void noteBegun(Grant grant) {
+    notes.begun.add(PlainNotes.key(grant.store(), grant.number()));
+  }
+
+  Duration mostBeamOn(Grant grant) {
+    Duration scan = grant.exposure().scan().duration();
+    return grant.longestBeamOn().compareTo(scan) < 0 ? grant.longestBeamOn() : scan;
   }
 
   private void watch(int mine) {
@@ -190,13 +229,17 @@ class PlainInstrument implements Instrument {
       return;
     }
     Grant grant = running.get();
-    if (hardware.current().compareTo(grant.highestCurrent()) > 0) {
+    if (tooHigh(grant)) {
       end(Optional.of(new Fault(FaultKind.CURRENT_OUT_OF_BOUNDS, "too much current")));
     } else if (leaseEnded(grant)) {
       end(Optional.of(new Fault(FaultKind.LEASE_ENDED, "no heartbeat came")));
     } else {
       later(GLANCE, () -> watch(mine));
     }
+  }
+
+  boolean tooHigh(Grant grant) {
+    return hardware.current().compareTo(grant.highestCurrent()) > 0;
   }
 
   boolean leaseEnded(Grant grant) {
@@ -216,9 +259,13 @@ class PlainInstrument implements Instrument {
     Grant grant = running.get();
     running = Optional.empty();
     Receipt receipt = receipt(grant, hardware.blank(), fault);
-    notes.receipts.put(PlainNotes.key(grant.store(), grant.number()), receipt);
+    keep(grant, receipt);
     tell(new InstrumentEvent.Ended(receipt));
     later(Duration.ZERO, this::startNext);
+  }
+
+  void keep(Grant grant, Receipt receipt) {
+    notes.receipts.put(PlainNotes.key(grant.store(), grant.number()), receipt);
   }
 
   Receipt receipt(Grant grant, Duration beamOn, Optional<Fault> fault) {
@@ -236,8 +283,12 @@ class PlainInstrument implements Instrument {
         reading,
         reading,
         Map.of(),
-        List.of(data.apply(grant)),
+        List.of(write(grant)),
         fault);
+  }
+
+  DataFile write(Grant grant) {
+    return data.apply(grant);
   }
 
   @Override
@@ -250,7 +301,7 @@ class PlainInstrument implements Instrument {
     later(toTheEnd(when), () -> endIfStill(mine, Optional.empty()));
   }
 
-  private Duration toTheEnd(StopWhen when) {
+  Duration toTheEnd(StopWhen when) {
     if (when == StopWhen.NOW) {
       return Duration.ZERO;
     }
@@ -276,16 +327,28 @@ class PlainInstrument implements Instrument {
   @Override
   public void windDown() {
     forbidWaiting();
-    end(Optional.empty());
-    hardware.closeValve();
+    endForWindDown();
+    closeValve();
     tell(new InstrumentEvent.WoundDown(readings()));
+  }
+
+  void endForWindDown() {
+    end(Optional.empty());
+  }
+
+  void closeValve() {
+    hardware.closeValve();
   }
 
   @Override
   public void close() {
     waiting.clear();
-    end(Optional.empty());
+    endForClose();
     dead = true;
+  }
+
+  void endForClose() {
+    end(Optional.empty());
   }
 
   void later(Duration delay, Runnable task) {
@@ -298,11 +361,11 @@ class PlainInstrument implements Instrument {
         });
   }
 
-  private void tell(InstrumentEvent event) {
+  void tell(InstrumentEvent event) {
     listener.on(event);
   }
 
-  private Readings readings() {
+  Readings readings() {
     return new Readings(
         !hardware.beamOn(), hardware.valveClosed(), true, hardware.conditions(), hardware.stage());
   }

@@ -2,10 +2,12 @@ package beamwarden.kit;
 
 import static org.junit.platform.engine.discovery.DiscoverySelectors.selectClass;
 
+import java.nio.file.Path;
 import java.util.Map;
 import java.util.TreeMap;
+import java.util.function.Function;
+import org.junit.jupiter.api.io.TempDir;
 import org.junit.platform.engine.TestExecutionResult;
-import org.junit.platform.launcher.Launcher;
 import org.junit.platform.launcher.TestExecutionListener;
 import org.junit.platform.launcher.TestIdentifier;
 import org.junit.platform.launcher.core.LauncherDiscoveryRequestBuilder;
@@ -21,11 +23,14 @@ final class SuiteRun implements TestExecutionListener {
 
   int passed;
 
-  static SuiteRun of(Class<? extends AdapterPromises> suite) {
+  /** Runs the suite on the calling thread, each test on a new rig. */
+  static SuiteRun of(Function<Path, Rig> rigs) {
     SuiteRun run = new SuiteRun();
-    Launcher launcher = LauncherFactory.create();
-    launcher.execute(
-        LauncherDiscoveryRequestBuilder.request().selectors(selectClass(suite)).build(), run);
+    Suite.rigs = rigs;
+    LauncherFactory.create()
+        .execute(
+            LauncherDiscoveryRequestBuilder.request().selectors(selectClass(Suite.class)).build(),
+            run);
     return run;
   }
 
@@ -44,6 +49,17 @@ final class SuiteRun implements TestExecutionListener {
       case SUCCESSFUL -> passed++;
       case ABORTED -> notShown.put(promise, message);
       case FAILED -> failed.put(promise, message);
+    }
+  }
+
+  /** The suite on the rigs of the run that is under way; surefire passes it by. */
+  static final class Suite extends AdapterPromises {
+    private static Function<Path, Rig> rigs;
+    @TempDir Path folder;
+
+    @Override
+    protected Rig rig() {
+      return rigs.apply(folder);
     }
   }
 }
