@@ -16,29 +16,33 @@ import java.util.Set;
  *   <li><b>P1, only under a grant.</b> No electron reaches a sample except under a grant that was
  *       begun.
  *   <li><b>P2, in order, each once.</b> Grants are exposed in the order in which they were begun,
- *       each at most once, whatever is sent again.
+ *       each at most once, whatever is sent again. One that is sent again after it began is not
+ *       answered {@code NotBegun}.
  *   <li><b>P3, noted before.</b> That an exposure begins is noted durably before the beam comes on.
  *   <li><b>P4, the grant's time.</b> The beam is blanked when the grant's {@code longestBeamOn} is
  *       used up; the time to blank lies within it.
  *   <li><b>P5, the grant's current.</b> An exposure whose current is seen above {@code
  *       highestCurrent} is ended at once with {@link FaultKind#CURRENT_OUT_OF_BOUNDS}.
  *   <li><b>P6, the stop.</b> A stop ends the exposure at the next boundary of its mode, or at once;
- *       a grant begun and not yet started does not start.
+ *       a grant begun and not yet started does not start, and is answered {@code NotBegun}.
  *   <li><b>P7, the lease.</b> When no heartbeat has come for the grant's lease, the beam is blanked
  *       and the exposure ends; the adapter's own elapsed time counts.
  *   <li><b>P8, the latest start.</b> A grant that cannot begin within {@code latestStart} of its
- *       heartbeat never begins.
+ *       heartbeat, or whose heartbeat has not been seen since the adapter was connected, never
+ *       begins.
  *   <li><b>P9, the fence.</b> A grant with a fencing number below the adapter's fence, of another
- *       store, of another chamber session, or before any seal, never begins.
+ *       store, of another chamber session, or before the first seal since the adapter was
+ *       connected, never begins.
  *   <li><b>P10, the seal.</b> On a seal the adapter durably raises its fence, blanks, makes every
  *       grant with a lower number impossible to start, and only then answers. A lower fence, or
  *       another store without an approved hand-over, is refused.
  *   <li><b>P11, unknown is not zero.</b> A seal's answer says of each grant asked about: never
- *       begun, the receipt, or unknown; it says never begun only when that is proved.
+ *       begun, the receipt, or unknown; it says never begun only when that is proved. The numbers
+ *       are those of the store that seals; what was done for another store is not an answer.
  *   <li><b>P12, the receipt is kept.</b> A receipt is kept durably until it is acknowledged, and a
  *       later seal that asks for it gets the same one.
  *   <li><b>P13, the receipt is no smaller.</b> A receipt's beam-on time, units touched and highest
- *       current are never below what was delivered.
+ *       current, with the meter's tolerance added, are never below what was delivered.
  *   <li><b>P14, data first.</b> Data files are forced to disk before their receipt is sent.
  *   <li><b>P15, read back.</b> Prepared conditions are read back from the instrument, not echoed.
  *       Preparing sends no electron to a sample.
