@@ -79,6 +79,12 @@ final class SealPromises {
     mayHaveBegun(trial, fates.get(died.number()), "under way when the adapter died");
     didNotHappen(trial, fates.get(refused.number()), "refused");
     didNotHappen(trial, fates.get(unsent.number()), "not sent");
+    InstrumentEvent toAnother =
+        trial.seal(trial.fence() + 1, Trial.OTHER_STORE, true, done.number()).event();
+    trial.require(
+        !(toAnother instanceof Sealed sealed)
+            || !(sealed.report().fates().get(done.number()) instanceof GrantFate.Reported),
+        "another store was given the receipt of a grant that is not its own");
   }
 
   private static void mayHaveBegun(Trial trial, GrantFate fate, String what) {

@@ -80,6 +80,12 @@ final class StartingPromises {
     trial.awaitEnded(running);
     trial.pass(trial.beats(20));
     trial.staysRefused(waiting, "its latest start passed while another exposure ran");
+    long before = trial.heartbeatNumber();
+    trial.restart();
+    trial.seal();
+    trial.prepare(exposure);
+    trial.refuses(
+        trial.draft(exposure).heartbeat(before), "its heartbeat came before a new connection");
   }
 
   static void p09(Trial trial) {
@@ -95,5 +101,8 @@ final class StartingPromises {
     trial.refuses(
         trial.draft(exposure).session(trial.session() + "-before"), "it is of another session");
     trial.exposed(exposure);
+    trial.restart();
+    trial.tryToPrepare(exposure);
+    trial.refuses(trial.draft(exposure), "nobody has sealed since the adapter was connected");
   }
 }

@@ -10,6 +10,7 @@ import beamwarden.instrument.GrantFate;
 import beamwarden.instrument.Receipt;
 import beamwarden.instrument.StopWhen;
 import java.time.Duration;
+import java.util.HashSet;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalLong;
@@ -228,10 +229,37 @@ final class BadInstruments {
     };
   }
 
+  static PlainInstrument looksAtTheLatestStartTooEarly(PlainRig rig) {
+    Set<Grant> seenInTime = new HashSet<>();
+    return new PlainInstrument(rig) {
+      @Override
+      public void begin(Grant grant) {
+        if (super.inTime(grant)) {
+          seenInTime.add(grant);
+        }
+        super.begin(grant);
+      }
+
+      @Override
+      boolean inTime(Grant grant) {
+        return seenInTime.contains(grant);
+      }
+    };
+  }
+
   static PlainInstrument ignoresTheLatestStart(PlainRig rig) {
     return new PlainInstrument(rig) {
       @Override
       boolean inTime(Grant grant) {
+        return true;
+      }
+    };
+  }
+
+  static PlainInstrument startsUnsealed(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      boolean sealed() {
         return true;
       }
     };
@@ -278,6 +306,25 @@ final class BadInstruments {
       @Override
       boolean maySeal(long fence, String store, boolean handOver) {
         return true;
+      }
+    };
+  }
+
+  static PlainInstrument tellsOneStoreOfAnother(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      String key(long grant) {
+        return PlainNotes.key(Trial.STORE, grant);
+      }
+    };
+  }
+
+  static PlainInstrument forgetsItsFenceWithItsProcess(PlainRig rig) {
+    return new PlainInstrument(rig) {
+      @Override
+      void die() {
+        notes.fence = 0;
+        super.die();
       }
     };
   }

@@ -46,6 +46,7 @@ class PlainInstrument implements Instrument {
   private final Map<Long, Long> heartbeatNanos = new HashMap<>();
   private long lastHeartbeatNanos;
   private int exposure;
+  private boolean sealed;
   private boolean dead;
   private InstrumentListener listener = event -> {};
 
@@ -60,6 +61,8 @@ class PlainInstrument implements Instrument {
   @Override
   public void connect(InstrumentListener to) {
     listener = to;
+    sealed = false;
+    heartbeatNanos.clear();
     tell(new InstrumentEvent.Connected(abilities, session(), readings()));
   }
 
@@ -86,11 +89,16 @@ class PlainInstrument implements Instrument {
     }
     notes.fence = fence;
     notes.store = store;
+    sealed = true;
     endForSeal();
     forbidWaiting();
     Map<Long, GrantFate> fates = new HashMap<>();
-    grants.forEach(grant -> fates.put(grant, fate(PlainNotes.key(store, grant))));
+    grants.forEach(grant -> fates.put(grant, fate(key(grant))));
     tell(new InstrumentEvent.Sealed(new SealReport(fence, store, fates)));
+  }
+
+  String key(long grant) {
+    return PlainNotes.key(notes.store, grant);
   }
 
   boolean maySeal(long fence, String store, boolean handOver) {
@@ -172,7 +180,7 @@ class PlainInstrument implements Instrument {
 
   private Optional<FaultKind> forbidden(Grant grant) {
     boolean entitled =
-        notes.fence > 0
+        sealed()
             && ofFence(grant)
             && ofStore(grant)
             && ofSession(grant)
@@ -181,6 +189,10 @@ class PlainInstrument implements Instrument {
       return Optional.of(FaultKind.NOT_OFFERED);
     }
     return inTime(grant) ? Optional.empty() : Optional.of(FaultKind.STARTED_TOO_LATE);
+  }
+
+  boolean sealed() {
+    return sealed;
   }
 
   boolean ofFence(Grant grant) {

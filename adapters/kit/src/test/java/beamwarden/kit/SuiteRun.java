@@ -25,8 +25,18 @@ final class SuiteRun implements TestExecutionListener {
 
   /** Runs the suite on the calling thread, each test on a new rig. */
   static SuiteRun of(Function<Path, Rig> rigs) {
+    return of(rigs, false);
+  }
+
+  /** The same, and what cannot be shown counts as a failure. */
+  static SuiteRun ofAll(Function<Path, Rig> rigs) {
+    return of(rigs, true);
+  }
+
+  private static SuiteRun of(Function<Path, Rig> rigs, boolean showsEverything) {
     SuiteRun run = new SuiteRun();
     Suite.rigs = rigs;
+    Suite.everything = showsEverything;
     LauncherFactory.create()
         .execute(
             LauncherDiscoveryRequestBuilder.request().selectors(selectClass(Suite.class)).build(),
@@ -55,11 +65,17 @@ final class SuiteRun implements TestExecutionListener {
   /** The suite on the rigs of the run that is under way; surefire passes it by. */
   static final class Suite extends AdapterPromises {
     private static Function<Path, Rig> rigs;
+    private static boolean everything;
     @TempDir Path folder;
 
     @Override
     protected Rig rig() {
       return rigs.apply(folder);
+    }
+
+    @Override
+    protected boolean showsEverything() {
+      return everything;
     }
   }
 }
