@@ -1,5 +1,7 @@
 package beamwarden.bridge;
 
+import beamwarden.beam.RasterScan;
+import beamwarden.beam.Rectangle;
 import java.lang.reflect.InvocationTargetException;
 import java.lang.reflect.ParameterizedType;
 import java.lang.reflect.RecordComponent;
@@ -46,6 +48,9 @@ final class RandomValues {
     if (plain.isEnum()) {
       return plain.getEnumConstants()[random.nextInt(plain.getEnumConstants().length)];
     }
+    if (plain == RasterScan.class) {
+      return raster();
+    }
     return plain.isRecord() ? record(plain) : scalar(plain);
   }
 
@@ -71,6 +76,20 @@ final class RandomValues {
       }
     }
     throw new AssertionError("no valid " + type + " in " + MOST_TRIES + " tries");
+  }
+
+  /** Chance alone seldom finds lines within a frame. */
+  private RasterScan raster() {
+    int first = random.nextInt(1000);
+    int count = 1 + random.nextInt(1000);
+    return new RasterScan(
+        (Rectangle) record(Rectangle.class),
+        1 + random.nextInt(5000),
+        first + count + random.nextInt(1000),
+        first,
+        count,
+        Duration.ofNanos(1 + random.nextInt(Integer.MAX_VALUE)),
+        Duration.ofNanos(random.nextInt(Integer.MAX_VALUE)));
   }
 
   private Object container(Class<?> raw, Type[] of) {
@@ -127,9 +146,9 @@ final class RandomValues {
 
   private Duration duration() {
     return switch (random.nextInt(4)) {
-      case 0 -> Duration.ofNanos(random.nextLong());
+      case 0 -> Duration.ofNanos(random.nextInt());
       case 1 -> Duration.ofSeconds(random.nextInt(50_000));
-      case 2 -> Duration.ofNanos(random.nextInt(100) - 50);
+      case 2 -> Duration.ofNanos(random.nextInt(100));
       default -> Duration.ofSeconds(random.nextLong(), random.nextInt(1_000_000_000));
     };
   }
