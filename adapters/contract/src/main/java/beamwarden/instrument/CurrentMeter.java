@@ -24,6 +24,11 @@ public record CurrentMeter(
     return new Current(truly * (1 + drift));
   }
 
+  /** What a current that reads so may truly be at most, at the moment of the reading. */
+  public Current highestNow(Current read) {
+    return new Current(read.amperes() * (1 + tolerance) + floor.amperes());
+  }
+
   /** Whether a reading is so far from the wish that the night must stop. */
   public boolean outOfBounds(Current wished, Current read) {
     double allowed = wished.amperes() * (drift + tolerance) + floor.amperes();

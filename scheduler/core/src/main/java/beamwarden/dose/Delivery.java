@@ -39,4 +39,18 @@ public record Delivery(
           "grant " + grant + ": a best value is above its upper value");
     }
   }
+
+  /** The same with a higher upper current, when a later reading showed more. */
+  public Delivery withUpperCurrent(Current higher) {
+    return new Delivery(
+        grant,
+        stay,
+        exposure,
+        unitsTouched,
+        bestBeamOn,
+        upperBeamOn,
+        bestCurrent,
+        higher.max(upperCurrent),
+        tolerances);
+  }
 }

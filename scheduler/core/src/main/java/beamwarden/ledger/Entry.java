@@ -2,8 +2,10 @@ package beamwarden.ledger;
 
 import beamwarden.beam.Exposure;
 import beamwarden.dose.Delivery;
+import beamwarden.dose.Trim;
 import beamwarden.instrument.CurrentReading;
 import beamwarden.instrument.Receipt;
+import beamwarden.queue.HeldFor;
 import beamwarden.queue.JobState;
 import beamwarden.queue.Queue;
 import beamwarden.queue.Sample;
@@ -59,19 +61,34 @@ public sealed interface Entry {
    *
    * @param job the job's id
    * @param state the new state
+   * @param heldFor what it waits for, when it is held
    * @param because why, in one sentence; may be empty
    */
-  record JobChanged(String job, JobState state, String because) implements Entry {}
+  record JobChanged(String job, JobState state, Optional<HeldFor> heldFor, String because)
+      implements Entry {
+    /** Refuses a hold without its kind, and a kind without a hold. */
+    public JobChanged {
+      if (heldFor.isPresent() != (state == JobState.HELD)) {
+        throw new IllegalArgumentException("a held job, and no other, says what it waits for");
+      }
+    }
+  }
 
   /**
    * A job was cut to what its caps leave room for.
    *
    * @param job the job's id
-   * @param units how many units of each pass remain
-   * @param passes how many passes remain
+   * @param to what is left of it
    * @param because what the cap left, in one sentence
    */
-  record JobTrimmed(String job, long units, int passes, String because) implements Entry {}
+  record JobTrimmed(String job, Trim to, String because) implements Entry {}
+
+  /**
+   * A fault kept the instrument from being brought to a job's conditions: a try is used up.
+   *
+   * @param job the job's id
+   */
+  record JobFaulted(String job) implements Entry {}
 
   /**
    * A grant was stored; from here on it counts in full.
@@ -115,9 +132,11 @@ public sealed interface Entry {
    *
    * @param grant its number
    * @param sample its sample
+   * @param faulted whether a fault kept it from being used, which counts towards the retries
    * @param because how it is known
    */
-  record GrantVoided(long grant, String sample, String because) implements Entry {
+  record GrantVoided(long grant, String sample, boolean faulted, String because)
+      implements Entry {
     @Override
     public String chain() {
       return sample;
@@ -161,7 +180,13 @@ public sealed interface Entry {
    *     hand-over}
    * @param reason why
    */
-  record Approved(String thing, String reason) implements Entry {}
+  record Approved(String thing, String reason) implements Entry {
+    /** The name under which holder and placements are confirmed after the chamber was touched. */
+    public static final String PLACEMENTS = "placements";
+
+    /** The name under which an instrument bound to another store is taken over. */
+    public static final String HAND_OVER = "hand-over";
+  }
 
   /**
    * Something happened in the night that a person should read in the morning.

@@ -1,0 +1,129 @@
+package beamwarden.ledger;
+
+import beamwarden.dose.Done;
+import beamwarden.dose.Trim;
+import beamwarden.instrument.Receipt;
+import beamwarden.queue.HeldFor;
+import beamwarden.queue.Job;
+import beamwarden.queue.JobState;
+import java.time.Instant;
+import java.util.HashMap;
+import java.util.Map;
+import java.util.Optional;
+
+/**
+ * What the books know of one job.
+ *
+ * @param job the job
+ * @param place its place among all jobs ever submitted, from 0 on
+ * @param state where it stands
+ * @param heldFor what it waits for, when it is held
+ * @param because why it is in that state; may be empty
+ * @param done how much of it is done
+ * @param trim to what it was cut, if it was
+ * @param coincidences coincidences counted so far, by pass
+ * @param exposures how many receipts were booked for it
+ * @param faultsInARow how many exposures in a row ended with a fault
+ * @param started when its first grant was stored
+ * @param ended when it ended
+ */
+public record JobRecord(
+    Job job,
+    int place,
+    JobState state,
+    Optional<HeldFor> heldFor,
+    String because,
+    Done done,
+    Optional<Trim> trim,
+    Map<Integer, Long> coincidences,
+    int exposures,
+    int faultsInARow,
+    Optional<Instant> started,
+    Optional<Instant> ended) {
+  /** The name under which a receipt counts coincidences. */
+  public static final String COINCIDENCES = "coincidences";
+
+  /** Copies the map. */
+  public JobRecord {
+    coincidences = Map.copyOf(coincidences);
+  }
+
+  static JobRecord submitted(Job job, int place) {
+    return new JobRecord(
+        job,
+        place,
+        JobState.WAITING,
+        Optional.empty(),
+        "",
+        Done.NOTHING,
+        Optional.empty(),
+        Map.of(),
+        0,
+        0,
+        Optional.empty(),
+        Optional.empty());
+  }
+
+  JobRecord changed(Entry.JobChanged change, Instant at) {
+    return new JobRecord(
+        job,
+        place,
+        change.state(),
+        change.heldFor(),
+        change.because(),
+        done,
+        trim,
+        coincidences,
+        exposures,
+        change.state() == JobState.WAITING ? 0 : faultsInARow,
+        started,
+        change.state().ended() ? Optional.of(at) : Optional.empty());
+  }
+
+  JobRecord trimmed(Trim to) {
+    return with(done, Optional.of(to), coincidences, exposures, faultsInARow, started);
+  }
+
+  JobRecord granted(Instant at) {
+    return with(
+        done, trim, coincidences, exposures, faultsInARow, Optional.of(started.orElse(at)));
+  }
+
+  JobRecord received(int pass, Receipt receipt) {
+    Map<Integer, Long> counted = new HashMap<>(coincidences);
+    counted.merge(pass, receipt.counts().getOrDefault(COINCIDENCES, 0L), Long::sum);
+    return with(
+        done.plus(pass, receipt.unitsDone()),
+        trim,
+        counted,
+        exposures + 1,
+        receipt.fault().isPresent() ? faultsInARow + 1 : 0,
+        started);
+  }
+
+  JobRecord faulted() {
+    return with(done, trim, coincidences, exposures, faultsInARow + 1, started);
+  }
+
+  private JobRecord with(
+      Done newDone,
+      Optional<Trim> newTrim,
+      Map<Integer, Long> newCoincidences,
+      int newExposures,
+      int newFaults,
+      Optional<Instant> newStarted) {
+    return new JobRecord(
+        job,
+        place,
+        state,
+        heldFor,
+        because,
+        newDone,
+        newTrim,
+        newCoincidences,
+        newExposures,
+        newFaults,
+        newStarted,
+        ended);
+  }
+}

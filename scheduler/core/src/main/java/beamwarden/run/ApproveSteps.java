@@ -1,0 +1,113 @@
+package beamwarden.run;
+
+import beamwarden.dose.CapVerdict;
+import beamwarden.dose.Caps;
+import beamwarden.ledger.Entry;
+import beamwarden.ledger.JobRecord;
+import beamwarden.ledger.SampleRecord;
+import beamwarden.queue.HeldFor;
+import beamwarden.queue.JobState;
+import beamwarden.queue.Sample;
+import java.util.Optional;
+
+/** What a person loosens or confirms; each needs a reason, and is an entry. */
+final class ApproveSteps {
+  /** How many caps one approval may raise, one after the other. */
+  private static final int MOST_CAPS = 64;
+
+  private final RunSetup setup;
+
+  ApproveSteps(RunSetup setup) {
+    this.setup = setup;
+  }
+
+  Optional<String> approve(Turn turn, Event.Wish.Approve approve) {
+    if (approve.reason().isBlank()) {
+      return Optional.of("an approval needs a reason; give it with --reason");
+    }
+    String thing = approve.thing();
+    if (thing.equals(Entry.Approved.PLACEMENTS)) {
+      return placements(turn, approve);
+    }
+    if (thing.equals(Entry.Approved.HAND_OVER)) {
+      turn.write(new Entry.Approved(thing, approve.reason()));
+      return Optional.empty();
+    }
+    Optional<JobRecord> job = turn.books.job(thing);
+    if (job.isPresent()) {
+      return raiseCaps(turn, approve, job.get());
+    }
+    Optional<SampleRecord> sample = turn.books.sample(thing);
+    if (sample.isPresent()) {
+      return adopt(turn, approve, sample.get());
+    }
+    return Optional.of(
+        "there is nothing called "
+            + thing
+            + " to approve; name a job, a sample, placements or hand-over");
+  }
+
+  private static Optional<String> placements(Turn turn, Event.Wish.Approve approve) {
+    if (turn.books.unconfirmedSession().isEmpty()) {
+      return Optional.of("no placement waits to be confirmed");
+    }
+    turn.write(new Entry.Approved(approve.thing(), approve.reason()));
+    goOn(turn, HeldFor.PLACEMENTS, record -> true);
+    return Optional.empty();
+  }
+
+  private static Optional<String> adopt(
+      Turn turn, Event.Wish.Approve approve, SampleRecord record) {
+    Optional<Sample> asked = record.asked();
+    if (asked.isEmpty()) {
+      return Optional.of("no change of sample " + approve.thing() + " waits to be approved");
+    }
+    turn.write(new Entry.Approved(approve.thing(), approve.reason()));
+    turn.write(new Entry.SampleDeclared(asked.get(), approve.reason()));
+    goOn(turn, HeldFor.APPROVAL, job -> job.job().sample().equals(approve.thing()));
+    return Optional.empty();
+  }
+
+  /** A job that asked is approved by raising the caps that bind, just enough for what is left. */
+  private Optional<String> raiseCaps(Turn turn, Event.Wish.Approve approve, JobRecord record) {
+    if (!record.heldFor().equals(Optional.of(HeldFor.APPROVAL))) {
+      return Optional.of(approve.thing() + " does not wait for an approval");
+    }
+    SampleRecord known = turn.books.sample(record.job().sample()).orElseThrow();
+    if (known.asked().isPresent()) {
+      return Optional.of(
+          "its queue changes sample " + known.sample().id() + "; approve that sample");
+    }
+    Sample raised = known.sample();
+    for (int caps = 0; caps < MOST_CAPS; caps++) {
+      CapVerdict verdict =
+          Caps.admitWhole(raised, known.dose(), record.job(), setup.profile().abilities());
+      if (!(verdict instanceof CapVerdict.Refused refused)) {
+        break;
+      }
+      Optional<Sample> higher = Caps.raised(raised, refused);
+      if (higher.isEmpty()) {
+        return Optional.of(
+            "this cannot be approved: " + refused.sentence() + "; move the job elsewhere");
+      }
+      raised = higher.get();
+    }
+    turn.write(new Entry.Approved(approve.thing(), approve.reason()));
+    turn.write(new Entry.SampleDeclared(raised, approve.reason()));
+    JobSteps.change(turn, record, JobState.WAITING, "approved: " + approve.reason());
+    return Optional.empty();
+  }
+
+  /** Which of the held jobs go on. */
+  private interface Which {
+    boolean matches(JobRecord record);
+  }
+
+  private static void goOn(Turn turn, HeldFor held, Which which) {
+    for (JobRecord record : turn.books.jobs(JobState.HELD)) {
+      if (record.heldFor().equals(Optional.of(held)) && which.matches(record)) {
+        JobSteps.change(turn, record, JobState.WAITING, "approved");
+      }
+    }
+  }
+}

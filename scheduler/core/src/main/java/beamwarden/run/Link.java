@@ -1,0 +1,41 @@
+package beamwarden.run;
+
+import java.time.Instant;
+
+/**
+ * How the run stands with its instrument.
+ *
+ * @param phase how far the connection is
+ * @param until when the phase has taken too long, or when it ends by itself
+ * @param fence the fencing number under which the instrument was last sealed; 0 before
+ * @param session the chamber session that it reported; empty before
+ */
+record Link(Phase phase, Instant until, long fence, String session) {
+  /** How far a connection is. */
+  enum Phase {
+    /** There is none; it is tried again at {@code until}. */
+    OFFLINE,
+    /** It was asked for. */
+    CONNECTING,
+    /** The instrument answered; the fence is being raised in the store. */
+    FENCING,
+    /** The instrument was asked to seal. */
+    SEALING,
+    /** It is sealed by us: grants may be sent. */
+    ONLINE,
+    /** It is bound to another store, or another daemon took it: a person must act. */
+    FOREIGN
+  }
+
+  static Link offline(Instant until) {
+    return new Link(Phase.OFFLINE, until, 0, "");
+  }
+
+  boolean online() {
+    return phase == Phase.ONLINE;
+  }
+
+  Link to(Phase next, Instant newUntil) {
+    return new Link(next, newUntil, fence, session);
+  }
+}

@@ -1,0 +1,50 @@
+package beamwarden.run;
+
+import beamwarden.instrument.StopWhen;
+import beamwarden.ledger.Books;
+import beamwarden.ledger.Entry;
+import java.time.Instant;
+import java.util.List;
+import java.util.Optional;
+import java.util.Set;
+
+/**
+ * Everything a run knows between two events. Immutable.
+ *
+ * @param books what is on disk
+ * @param link how it stands with the instrument
+ * @param view what is known of the instrument's condition
+ * @param beat the heartbeats
+ * @param doing what the instrument was asked to do between exposures
+ * @param current the grant that is exposing, or about to
+ * @param next the grant that is stored for when {@code current} has ended
+ * @param storing what the commit under way stores; empty when none is
+ * @param answers answers to give when it is stored
+ * @param toAcknowledge receipts booked and not yet acknowledged
+ * @param requests the number of the last request
+ * @param stopWish how soon a person wants the exposure to end, if one does
+ * @param halted why everything stopped for good, if it did
+ * @param standingBy why nothing is exposed just now, for people; empty while something is
+ */
+public record RunState(
+    Books books,
+    Link link,
+    View view,
+    Beat beat,
+    Doing doing,
+    Optional<Slot> current,
+    Optional<Slot> next,
+    List<Entry> storing,
+    List<Command.Answer> answers,
+    Set<Long> toAcknowledge,
+    long requests,
+    Optional<StopWhen> stopWish,
+    Optional<String> halted,
+    String standingBy) {
+  /** Copies the collections. */
+  public RunState {
+    storing = List.copyOf(storing);
+    answers = List.copyOf(answers);
+    toAcknowledge = Set.copyOf(toAcknowledge);
+  }
+}
