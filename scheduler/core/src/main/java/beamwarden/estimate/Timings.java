@@ -1,6 +1,5 @@
 package beamwarden.estimate;
 
-import beamwarden.beam.BeamSettings;
 import beamwarden.beam.Conditions;
 import beamwarden.beam.Exposure;
 import beamwarden.beam.Point;
@@ -24,32 +23,13 @@ public final class Timings {
     return mode == null ? Duration.ZERO : mode.frameStart();
   }
 
-  /**
-   * The time to go from one set of conditions to another: the stage, the column and the filter move
-   * side by side, and the slowest decides. From unknown conditions everything is taken to change.
-   */
+  /** The time to go from one set of conditions to another; an unknown stage counts as there. */
   public static Duration preparation(
       Optional<Conditions> from,
       Optional<Point> stage,
       Conditions to,
       Point target,
       Abilities abilities) {
-    Duration travel =
-        stage.map(at -> abilities.stage().travel(at, target)).orElse(Duration.ZERO);
-    Duration column =
-        from.map(before -> abilities.column().settling(before.beam(), to.beam()))
-            .orElse(abilities.column().settling(NOTHING_SET, to.beam()));
-    boolean sameFilter = from.map(Conditions::filter).equals(Optional.of(to.filter()));
-    Duration filter = sameFilter ? Duration.ZERO : abilities.filterChange();
-    return longest(travel, longest(column, filter));
-  }
-
-  private static final BeamSettings NOTHING_SET =
-      new BeamSettings(
-          new beamwarden.quantity.Voltage(Double.MIN_VALUE),
-          new beamwarden.quantity.Current(Double.MIN_VALUE));
-
-  private static Duration longest(Duration one, Duration other) {
-    return one.compareTo(other) >= 0 ? one : other;
+    return abilities.preparation(from, stage.orElse(target), to, target);
   }
 }

@@ -12,7 +12,6 @@ import java.time.Instant;
 import java.time.InstantSource;
 import java.util.ArrayDeque;
 import java.util.Deque;
-import java.util.List;
 import java.util.function.Consumer;
 import org.slf4j.Logger;
 import org.slf4j.LoggerFactory;
@@ -74,7 +73,8 @@ public final class Engine {
     this.instrument = instrument;
     this.time = time;
     this.outlet = outlet;
-    this.state = run.begin(Books.of(journal.read()));
+    long fence = journal.raiseFence(name, time.instant());
+    this.state = run.begin(Books.of(journal.read()), fence);
   }
 
   /** The state after the last step. */
@@ -173,9 +173,8 @@ public final class Engine {
 
   private void raiseFence(Instant now) {
     try {
-      var recorded = journal.raiseFence(name, now);
-      long fence = ((Entry.FenceRaised) recorded.entry()).fence();
-      waiting.addFirst(new Event.FenceRaised(fence, List.of(recorded)));
+      long fence = journal.raiseFence(name, now);
+      waiting.addFirst(new Event.FenceRaised(fence));
     } catch (JournalException failure) {
       LOGGER.error("the fence could not be raised", failure);
       waiting.addFirst(new Event.CommitFailed(failure.getMessage()));

@@ -34,14 +34,8 @@ public sealed interface Event {
    * The fence was raised, durably.
    *
    * @param fence the new fencing number
-   * @param recorded the entries that say so
    */
-  record FenceRaised(long fence, List<Recorded> recorded) implements Event {
-    /** Copies the list. */
-    public FenceRaised {
-      recorded = List.copyOf(recorded);
-    }
-  }
+  record FenceRaised(long fence) implements Event {}
 
   /**
    * The instrument told something.

@@ -7,7 +7,7 @@ import java.time.Instant;
  *
  * @param phase how far the connection is
  * @param until when the phase has taken too long, or when it ends by itself
- * @param fence the fencing number under which the instrument was last sealed; 0 before
+ * @param fence the fencing number that this run raised last
  * @param session the chamber session that it reported; empty before
  */
 record Link(Phase phase, Instant until, long fence, String session) {
@@ -27,8 +27,8 @@ record Link(Phase phase, Instant until, long fence, String session) {
     FOREIGN
   }
 
-  static Link offline(Instant until) {
-    return new Link(Phase.OFFLINE, until, 0, "");
+  static Link begin(long fence) {
+    return new Link(Phase.OFFLINE, Instant.MIN, fence, "");
   }
 
   boolean online() {

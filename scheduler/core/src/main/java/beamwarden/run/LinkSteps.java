@@ -7,6 +7,7 @@ import beamwarden.instrument.SealReport;
 import beamwarden.ledger.Entry;
 import beamwarden.ledger.Entry.Noted.What;
 import beamwarden.ledger.GrantRecord;
+import beamwarden.ledger.GrantState;
 import beamwarden.ledger.JobRecord;
 import beamwarden.queue.HeldFor;
 import beamwarden.queue.JobState;
@@ -50,7 +51,7 @@ final class LinkSteps {
       }
       case FOREIGN -> {
         if (turn.books.handOverApproved()) {
-          turn.link = Link.offline(turn.now);
+          turn.link = link.to(Link.Phase.OFFLINE, turn.now);
           return decide(turn);
         }
       }
@@ -90,7 +91,8 @@ final class LinkSteps {
     if (turn.link.phase() != Link.Phase.CONNECTING) {
       return;
     }
-    turn.link = new Link(Link.Phase.FENCING, turn.now, 0, connected.session());
+    turn.link =
+        new Link(Link.Phase.FENCING, turn.now, turn.link.fence(), connected.session());
     Optional<String> weaker =
         Guarantees.weaker(setup.profile().abilities(), connected.abilities());
     if (weaker.isPresent() && !turn.books.stopped().equals(weaker)) {
@@ -123,7 +125,6 @@ final class LinkSteps {
   }
 
   void fenceRaised(Turn turn, Event.FenceRaised raised) {
-    turn.stored(raised.recorded());
     Set<Long> asked = turn.books.unresolved().keySet();
     turn.link =
         new Link(Link.Phase.SEALING, answerDue(turn), raised.fence(), turn.link.session());
@@ -159,7 +160,7 @@ final class LinkSteps {
       Booking.book(turn, opened, Receiving.receive(opened.inFull(), reported.receipt()),
           reported.receipt());
       turn.toAcknowledge.add(opened.grant());
-    } else if (record.state() == beamwarden.ledger.GrantState.OPEN) {
+    } else if (record.state() == GrantState.OPEN) {
       turn.write(
           new Entry.GrantPresumed(
               opened.inFull(),
@@ -199,7 +200,8 @@ final class LinkSteps {
     if (turn.link.phase() == Link.Phase.ONLINE) {
       turn.note(What.FAULT, "the connection to the instrument was lost: " + reason);
     }
-    turn.link = Link.offline(turn.now.plus(setup.waits().reconnectAfter()));
+    turn.link =
+        turn.link.to(Link.Phase.OFFLINE, turn.now.plus(setup.waits().reconnectAfter()));
     turn.doing = new Doing.Nothing();
     turn.current = Optional.empty();
     turn.next = Optional.empty();

@@ -53,11 +53,16 @@ public final class Run {
     }
   }
 
-  /** The state in which a daemon starts, from what its journal says. */
-  public RunState begin(Books books) {
+  /**
+   * The state in which a daemon starts.
+   *
+   * @param books what its journal says
+   * @param fence the fencing number that it raised first of all
+   */
+  public RunState begin(Books books, long fence) {
     return new RunState(
         books,
-        Link.offline(Instant.MIN),
+        Link.begin(fence),
         View.NOTHING,
         Beat.NONE,
         new Doing.Nothing(),

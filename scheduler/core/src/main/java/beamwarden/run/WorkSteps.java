@@ -33,6 +33,9 @@ final class WorkSteps {
   /** How far a read-back of the stage may be from where it was sent, its repeatability apart. */
   private static final double STAGE_ROUNDING_METRES = 1e-9;
 
+  /** Longer than any exposure. */
+  private static final Duration ENDLESS = Duration.ofDays(10_000);
+
   private final RunSetup setup;
   private final JobSteps jobs;
 
@@ -74,7 +77,7 @@ final class WorkSteps {
   /** The next exposure of a job that can still end before the shift's wind-down, if any. */
   private Optional<Exposure> fitting(
       Turn turn, JobRecord record, Done done, SampleRecord sample, Shift shift) {
-    Optional<Exposure> whole = next(record, done, sample, Exposures.LONGEST);
+    Optional<Exposure> whole = next(record, done, sample, ENDLESS);
     if (whole.isEmpty()) {
       return whole;
     }
@@ -92,7 +95,7 @@ final class WorkSteps {
         shift
             .beamOnBudget()
             .map(most -> most.minus(turn.books.beamOnThisShift()))
-            .orElse(Exposures.LONGEST);
+            .orElse(ENDLESS);
     Duration most = left.compareTo(budget) < 0 ? left : budget;
     return most.isNegative() || most.isZero()
         ? Optional.empty()
@@ -125,8 +128,7 @@ final class WorkSteps {
             sample.sample(),
             abilities,
             effectiveDone(record),
-            record.trim(),
-            Exposures.LONGEST)
+            record.trim())
         .isEmpty();
   }
 
