@@ -2,16 +2,19 @@ package beamwarden.run;
 
 import beamwarden.instrument.Instrument;
 import beamwarden.instrument.InstrumentEvent;
+import beamwarden.instrument.StopWhen;
 import beamwarden.ledger.Books;
 import beamwarden.ledger.Entry;
 import beamwarden.ledger.GrantRecord;
 import beamwarden.ledger.GrantState;
 import beamwarden.ledger.Journal;
 import beamwarden.ledger.JournalException;
+import beamwarden.ledger.Recorded;
 import java.time.Instant;
 import java.time.InstantSource;
 import java.util.ArrayDeque;
 import java.util.Deque;
+import java.util.List;
 import java.util.function.Consumer;
 import org.slf4j.Logger;
 import org.slf4j.LoggerFactory;
@@ -39,6 +42,9 @@ public final class Engine {
   public interface Outlet {
     /** An asking is answered. */
     void answered(Command.Answer answer);
+
+    /** Entries are on disk. */
+    void recorded(List<Recorded> entries);
 
     /** A step is over, and this is the state now. */
     void stepped(RunState state, List<Wake> wakes);
@@ -93,10 +99,22 @@ public final class Engine {
       while (!waiting.isEmpty()) {
         step(waiting.removeFirst());
       }
+    } catch (RuntimeException broken) {
+      LOGGER.error("a rule of the run is broken", broken);
+      failSafe("a rule of the run is broken: " + broken.getMessage());
     } finally {
       stepping = false;
     }
     outlet.stepped(state, run.wakes(state, time.instant()));
+  }
+
+  /** Blanks the beam and stops for good: towards less dose. */
+  private void failSafe(String reason) {
+    waiting.clear();
+    state = state.haltedBecause(reason);
+    outlet.halted(reason);
+    instrument.stop(StopWhen.NOW);
+    instrument.windDown();
   }
 
   private void step(Event event) {
@@ -163,8 +181,9 @@ public final class Engine {
   private void commit(Command.Commit commit, Instant now) {
     commit.entries().forEach(Engine::log);
     try {
-      waiting.addFirst(
-          new Event.Committed(journal.commit(state.link().fence(), now, commit.entries())));
+      List<Recorded> recorded = journal.commit(state.link().fence(), now, commit.entries());
+      waiting.addFirst(new Event.Committed(recorded));
+      outlet.recorded(recorded);
     } catch (JournalException failure) {
       LOGGER.error("the books could not be written", failure);
       waiting.addFirst(new Event.CommitFailed(failure.getMessage()));

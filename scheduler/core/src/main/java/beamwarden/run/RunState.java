@@ -47,4 +47,23 @@ public record RunState(
     answers = List.copyOf(answers);
     toAcknowledge = Set.copyOf(toAcknowledge);
   }
+
+  /** The same, with everything stopped for good. */
+  RunState haltedBecause(String reason) {
+    return new RunState(
+        books,
+        link,
+        view,
+        beat,
+        doing,
+        Optional.empty(),
+        Optional.empty(),
+        List.of(),
+        answers,
+        toAcknowledge,
+        requests,
+        stopWish,
+        Optional.of(reason),
+        reason);
+  }
 }
