@@ -251,7 +251,8 @@ public final class Books {
       samples.put(
           sample.id(),
           known == null
-              ? new SampleRecord(sample, Optional.empty(), SampleDose.NONE, "")
+              ? new SampleRecord(
+                  sample, Optional.empty(), SampleDose.nothing(sample.placement()), "")
               : known.declared(sample));
     }
 

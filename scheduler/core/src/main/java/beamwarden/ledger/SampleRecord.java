@@ -24,7 +24,7 @@ public record SampleRecord(
 
   SampleRecord declared(Sample now) {
     Optional<Sample> still = asked.filter(wanted -> !wanted.equals(now));
-    return new SampleRecord(now, still, dose, head);
+    return new SampleRecord(now, still, dose.at(now.placement()), head);
   }
 
   SampleRecord withHead(String newHead) {

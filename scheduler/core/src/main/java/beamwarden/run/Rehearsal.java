@@ -111,13 +111,11 @@ public final class Rehearsal implements Engine.Outlet {
         wakes.stream()
             .map(Wake::at)
             .min(Comparator.naturalOrder())
-            .map(at -> time.after(Duration.between(time.instant(), at), this::woken));
+            .map(at -> time.after(untilThen(at), () -> take(new Event.Woken())));
   }
 
-  private void woken() {
-    if (!abandoned) {
-      engine.take(new Event.Woken());
-    }
+  private Duration untilThen(Instant at) {
+    return Duration.between(time.instant(), at);
   }
 
   @Override
@@ -127,8 +125,12 @@ public final class Rehearsal implements Engine.Outlet {
 
   @Override
   public void arrived(InstrumentEvent event) {
+    time.after(Duration.ZERO, () -> take(new Event.FromInstrument(event)));
+  }
+
+  private void take(Event event) {
     if (!abandoned) {
-      engine.take(new Event.FromInstrument(event));
+      engine.take(event);
     }
   }
 }
