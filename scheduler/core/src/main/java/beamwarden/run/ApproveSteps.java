@@ -1,7 +1,7 @@
 package beamwarden.run;
 
 import beamwarden.dose.CapVerdict;
-import beamwarden.dose.Caps;
+import beamwarden.dose.JobDose;
 import beamwarden.ledger.Entry;
 import beamwarden.ledger.JobRecord;
 import beamwarden.ledger.SampleRecord;
@@ -80,15 +80,21 @@ final class ApproveSteps {
     }
     Sample raised = known.sample();
     for (int caps = 0; caps < MOST_CAPS; caps++) {
-      CapVerdict verdict =
-          Caps.admitWhole(raised, known.dose(), record.job(), setup.profile().abilities());
-      if (!(verdict instanceof CapVerdict.Refused refused)) {
+      JobDose left =
+          JobDose.of(
+              record.job(),
+              raised,
+              setup.profile().abilities(),
+              known.dose(),
+              record.done(),
+              record.trim());
+      if (!(left.verdict() instanceof CapVerdict.Refused refused)) {
         break;
       }
-      Optional<Sample> higher = Caps.raised(raised, refused);
+      Optional<Sample> higher = Raising.of(raised, refused);
       if (higher.isEmpty()) {
         return Optional.of(
-            "this cannot be approved: " + refused.sentence() + "; move the job elsewhere");
+            "this cannot be approved: " + refused.because() + "; move the job elsewhere");
       }
       raised = higher.get();
     }

@@ -2,9 +2,9 @@ package beamwarden.run;
 
 import beamwarden.dose.Delivery;
 import beamwarden.dose.Receiving;
+import beamwarden.instrument.CurrentMeter;
 import beamwarden.instrument.CurrentReading;
 import beamwarden.instrument.Fault;
-import beamwarden.instrument.FaultKind;
 import beamwarden.instrument.Receipt;
 import beamwarden.ledger.Entry;
 import beamwarden.ledger.Entry.Noted.What;
@@ -21,7 +21,7 @@ final class Booking {
   /** Books a receipt that is believed; presumes the grant and stops the night otherwise. */
   static void book(Turn turn, Entry.GrantOpened opened, Receiving outcome, Receipt receipt) {
     if (outcome instanceof Receiving.Believed believed) {
-      turn.write(new Entry.GrantBooked(believed.delivery(), receipt));
+      turn.write(new Entry.GrantBooked(believed.delivered(), receipt));
     } else if (outcome instanceof Receiving.Contradicts contradicts) {
       String why = "grant " + opened.grant() + ": " + contradicts.because();
       turn.write(new Entry.GrantPresumed(contradicts.atMost(), why, Optional.of(receipt)));
@@ -62,7 +62,7 @@ final class Booking {
    * earlier grant counted on raises what was booked since the reading before.
    */
   static void reading(Turn turn, Profile profile, CurrentReading reading) {
-    var meter = profile.abilities().meter();
+    CurrentMeter meter = profile.abilities().meter();
     Current wished = reading.settings().current();
     Current atMost = meter.highestNow(reading.current());
     for (GrantRecord record : turn.books.sinceReading().values()) {
@@ -82,10 +82,7 @@ final class Booking {
               + reading.current()
               + " where "
               + wished
-              + " was set ("
-              + FaultKind.CURRENT_OUT_OF_BOUNDS.name().toLowerCase(java.util.Locale.ROOT)
-                  .replace('_', ' ')
-              + "); check the column");
+              + " was set: out of its bounds; check the column");
     }
   }
 }

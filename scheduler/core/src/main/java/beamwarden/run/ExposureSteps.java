@@ -1,16 +1,19 @@
 package beamwarden.run;
 
 import beamwarden.beam.Exposure;
+import beamwarden.dose.Deliveries;
 import beamwarden.dose.Delivery;
 import beamwarden.dose.Receiving;
 import beamwarden.estimate.Timings;
 import beamwarden.instrument.Fault;
+import beamwarden.instrument.FaultKind;
 import beamwarden.instrument.Grant;
 import beamwarden.instrument.InstrumentEvent;
 import beamwarden.instrument.Receipt;
 import beamwarden.instrument.StopWhen;
 import beamwarden.ledger.Entry;
 import beamwarden.ledger.Entry.Noted.What;
+import beamwarden.queue.JobState;
 import java.time.Duration;
 import java.time.Instant;
 import java.util.Optional;
@@ -54,7 +57,7 @@ final class ExposureSteps {
     boolean jobMayGoOn =
         turn.books
             .job(slot.opened().exposure().job())
-            .filter(job -> job.state() == beamwarden.queue.JobState.RUNNING)
+            .filter(job -> job.state() == JobState.RUNNING)
             .isPresent();
     if (slot.stopping() || !(now || turn.books.stopped().isPresent() || !jobMayGoOn)) {
       return;
@@ -85,7 +88,7 @@ final class ExposureSteps {
     return turn.books.stopped().isEmpty()
         && turn.books
             .job(job)
-            .filter(record -> record.state() == beamwarden.queue.JobState.RUNNING)
+            .filter(record -> record.state() == JobState.RUNNING)
             .isPresent();
   }
 
@@ -192,9 +195,9 @@ final class ExposureSteps {
     Duration slack = inFull.tolerances().blanking().plus(CLOCK_SLACK);
     if (receipt.beamOn().compareTo(passed.plus(slack)) > 0) {
       return new Receiving.Contradicts(
-          inFull, "its receipt tells of " + receipt.beamOn() + " of beam after " + passed);
+          "its receipt tells of " + receipt.beamOn() + " of beam after " + passed, inFull);
     }
-    return Receiving.receive(inFull, receipt);
+    return Deliveries.received(inFull, receipt, setup.profile().abilities().meter());
   }
 
   /** How far two processes' clocks may come apart within one exposure. */
@@ -202,7 +205,7 @@ final class ExposureSteps {
 
   void trouble(Turn turn, Fault fault) {
     turn.note(What.FAULT, fault.message());
-    if (fault.kind().remedy() == beamwarden.instrument.FaultKind.Remedy.STOP_NIGHT
+    if (fault.kind().remedy() == FaultKind.Remedy.STOP_NIGHT
         && turn.books.stopped().isEmpty()) {
       turn.note(What.STOPPED, fault.message());
     }

@@ -1,7 +1,7 @@
 package beamwarden.run;
 
 import beamwarden.dose.CapVerdict;
-import beamwarden.dose.Caps;
+import beamwarden.dose.JobDose;
 import beamwarden.dose.Trim;
 import beamwarden.instrument.Fault;
 import beamwarden.ledger.Entry;
@@ -38,9 +38,9 @@ final class JobSteps {
   }
 
   /** Writes a change of state that is due before the job may be exposed; true when it did. */
-  boolean settle(Turn turn, JobRecord record) {
+  boolean settle(Turn turn, JobRecord record, boolean nothingLeft) {
     SampleRecord sample = turn.books.sample(record.job().sample()).orElseThrow();
-    if (WorkSteps.nothingLeft(record, sample, setup.profile().abilities())) {
+    if (nothingLeft) {
       JobState end = record.trim().isPresent() ? JobState.SHORTENED : JobState.DONE;
       change(turn, record, end, record.trim().isPresent() ? "cut to what its caps allow" : "");
       return true;
@@ -85,10 +85,15 @@ final class JobSteps {
     if (record.started().isPresent() || record.trim().isPresent()) {
       return false;
     }
-    CapVerdict verdict =
-        Caps.admitWhole(
-            sample.sample(), sample.dose(), record.job(), setup.profile().abilities());
-    if (verdict instanceof CapVerdict.Refused refused) {
+    JobDose whole =
+        JobDose.of(
+            record.job(),
+            sample.sample(),
+            setup.profile().abilities(),
+            sample.dose(),
+            record.done(),
+            record.trim());
+    if (whole.verdict() instanceof CapVerdict.Refused refused) {
       refuseOrTrim(turn, record, sample, refused);
       return true;
     }
@@ -102,22 +107,28 @@ final class JobSteps {
       return;
     }
     Optional<Trim> trim =
-        Caps.trim(sample.sample(), sample.dose(), record.job(), setup.profile().abilities());
+        JobDose.trim(
+            record.job(),
+            sample.sample(),
+            sample.dose(),
+            setup.profile().abilities(),
+            record.job().beam().current(),
+            record.done());
     if (trim.isPresent()) {
-      turn.write(new Entry.JobTrimmed(record.job().id(), trim.get(), refused.sentence()));
+      turn.write(new Entry.JobTrimmed(record.job().id(), trim.get(), refused.because()));
     } else {
-      change(turn, record, JobState.REFUSED, "not even a line of it fits: " + refused.sentence());
+      change(turn, record, JobState.REFUSED, "not even a line of it fits: " + refused.because());
     }
   }
 
   /** What a job wants when a cap does not let it go on. */
   void stopAtCap(Turn turn, JobRecord record, CapVerdict.Refused refused) {
     switch (record.job().atCap()) {
-      case REFUSE -> change(turn, record, JobState.REFUSED, refused.sentence());
-      case ASK -> hold(turn, record, HeldFor.APPROVAL, refused.sentence());
+      case REFUSE -> change(turn, record, JobState.REFUSED, refused.because());
+      case ASK -> hold(turn, record, HeldFor.APPROVAL, refused.because());
       case TRIM -> {
         boolean part = record.exposures() > 0;
-        change(turn, record, part ? JobState.SHORTENED : JobState.REFUSED, refused.sentence());
+        change(turn, record, part ? JobState.SHORTENED : JobState.REFUSED, refused.because());
       }
     }
   }

@@ -1,5 +1,6 @@
 package beamwarden.run;
 
+import beamwarden.dose.Deliveries;
 import beamwarden.dose.Receiving;
 import beamwarden.instrument.GrantFate;
 import beamwarden.instrument.InstrumentEvent;
@@ -150,15 +151,17 @@ final class LinkSteps {
     }
   }
 
-  private static void resolve(Turn turn, GrantRecord record, GrantFate fate) {
+  private void resolve(Turn turn, GrantRecord record, GrantFate fate) {
     Entry.GrantOpened opened = record.opened();
     if (fate instanceof GrantFate.NeverBegun) {
       turn.write(
           new Entry.GrantVoided(
               opened.grant(), opened.chain(), false, "the sealed instrument never began it"));
     } else if (fate instanceof GrantFate.Reported reported) {
-      Booking.book(turn, opened, Receiving.receive(opened.inFull(), reported.receipt()),
-          reported.receipt());
+      Receiving outcome =
+          Deliveries.received(
+              opened.inFull(), reported.receipt(), setup.profile().abilities().meter());
+      Booking.book(turn, opened, outcome, reported.receipt());
       turn.toAcknowledge.add(opened.grant());
     } else if (record.state() == GrantState.OPEN) {
       turn.write(

@@ -9,7 +9,7 @@ import beamwarden.dose.Caps;
 import beamwarden.dose.Delivery;
 import beamwarden.dose.Done;
 import beamwarden.dose.Exposures;
-import beamwarden.dose.Receiving;
+import beamwarden.dose.Deliveries;
 import beamwarden.estimate.Timings;
 import beamwarden.instrument.Abilities;
 import beamwarden.instrument.CurrentReading;
@@ -47,7 +47,8 @@ final class WorkSteps {
   /** Starts the next piece of work; false when the shift has none. */
   boolean decide(Turn turn, Shift shift) {
     for (JobRecord record : setup.planner().order(turn.books.jobs(), turn.now)) {
-      if (jobs.settle(turn, record)) {
+      SampleRecord sample = turn.books.sample(record.job().sample()).orElseThrow();
+      if (jobs.settle(turn, record, nothingLeft(record, sample))) {
         return true;
       }
       if (jobs.mayRun(turn, record) && expose(turn, record, shift)) {
@@ -109,12 +110,12 @@ final class WorkSteps {
   }
 
   /** What is done, with the points that already have their coincidences taken as whole. */
-  private static Done effectiveDone(JobRecord record) {
+  private Done effectiveDone(JobRecord record) {
     Done done = record.done();
     for (Map.Entry<Integer, Long> counted : record.coincidences().entrySet()) {
       int pass = counted.getKey();
       if (CountRule.reached(record, pass)) {
-        long all = Exposures.unitsPerPass(record.job(), record.trim());
+        long all = Exposures.pass(record.job(), pass, abilities()).whole().units();
         done = done.plus(pass, Math.max(0, all - done.units(pass)));
       }
     }
@@ -122,13 +123,9 @@ final class WorkSteps {
   }
 
   /** Whether a job has nothing left to expose. */
-  static boolean nothingLeft(JobRecord record, SampleRecord sample, Abilities abilities) {
+  boolean nothingLeft(JobRecord record, SampleRecord sample) {
     return Exposures.next(
-            record.job(),
-            sample.sample(),
-            abilities,
-            effectiveDone(record),
-            record.trim())
+            record.job(), sample.sample(), abilities(), effectiveDone(record), record.trim())
         .isEmpty();
   }
 
@@ -214,7 +211,7 @@ final class WorkSteps {
   }
 
   private Delivery planned(Turn turn, Exposure exposure, long grant) {
-    return Receiving.planned(
+    return Deliveries.planned(
         exposure,
         abilities(),
         turn.view.reading().orElseThrow().current(),
@@ -241,7 +238,9 @@ final class WorkSteps {
         .filter(next -> endsInTime(next, start, shift))
         .filter(next -> !(next.scan() instanceof SpotScan) || next.pass() == running.pass())
         .map(next -> planned(turn, next, turn.books.lastGrant() + 1))
-        .filter(next -> Caps.admit(sample.sample(), sample.dose(), next).admitted())
+        .filter(
+            next ->
+                Caps.admit(sample.sample(), sample.dose(), next) instanceof CapVerdict.Admitted)
         .ifPresent(next -> turn.next = Optional.of(open(turn, next)));
   }
 
