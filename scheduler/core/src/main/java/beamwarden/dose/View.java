@@ -93,6 +93,12 @@ record View(
     return Highest.sum(near(passes, place.cell(), place.axes()), place.cell());
   }
 
+  /** What is summed at one place, along some axes. */
+  double sumAt(List<PassDose> passes, Point at, Axes axes) {
+    Box cell = Box.square(at, 0, axes);
+    return Highest.sum(near(passes, cell, axes), cell);
+  }
+
   private List<Footprint> near(List<PassDose> passes, Box box, Axes axes) {
     return passes.stream()
         .filter(PassDose::touchesAnything)

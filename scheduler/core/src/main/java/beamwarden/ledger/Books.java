@@ -21,8 +21,8 @@ import java.util.Optional;
 /**
  * Everything the entries say, taken together: what a daemon knows after reading its journal.
  *
- * <p>The books are nothing but a fold over the recorded entries, so a restart knows exactly what was
- * known before it. Immutable; {@link #with} gives the books with one entry more.
+ * <p>The books are nothing but a fold over the recorded entries, so a restart knows exactly what
+ * was known before it. Immutable; {@link #with} gives the books with one entry more.
  */
 public final class Books {
   /** Books without any entry. */
@@ -277,10 +277,7 @@ public final class Books {
         sinceReading.put(
             receipt.grant(),
             new GrantRecord(
-                before.opened(),
-                GrantState.BOOKED,
-                booked.delivered(),
-                Optional.of(receipt)));
+                before.opened(), GrantState.BOOKED, booked.delivered(), Optional.of(receipt)));
       }
       replace(booked.chain(), receipt.grant(), booked.delivered());
     }
@@ -307,8 +304,7 @@ public final class Books {
       samples.computeIfPresent(
           voided.sample(), (id, record) -> record.with(record.dose().without(voided.grant())));
       if (before != null && voided.faulted()) {
-        jobs.computeIfPresent(
-            before.opened().exposure().job(), (id, record) -> record.faulted());
+        jobs.computeIfPresent(before.opened().exposure().job(), (id, record) -> record.faulted());
       }
     }
 

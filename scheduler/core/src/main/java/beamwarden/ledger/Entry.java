@@ -135,8 +135,7 @@ public sealed interface Entry {
    * @param faulted whether a fault kept it from being used, which counts towards the retries
    * @param because how it is known
    */
-  record GrantVoided(long grant, String sample, boolean faulted, String because)
-      implements Entry {
+  record GrantVoided(long grant, String sample, boolean faulted, String because) implements Entry {
     @Override
     public String chain() {
       return sample;

@@ -85,8 +85,7 @@ public record JobRecord(
   }
 
   JobRecord granted(Instant at) {
-    return with(
-        done, trim, coincidences, exposures, faultsInARow, Optional.of(started.orElse(at)));
+    return with(done, trim, coincidences, exposures, faultsInARow, Optional.of(started.orElse(at)));
   }
 
   JobRecord received(int pass, Receipt receipt) {

@@ -12,8 +12,7 @@ import java.util.Optional;
  * @param dose everything it has received or may yet receive
  * @param head the head of its chain of entries
  */
-public record SampleRecord(
-    Sample sample, Optional<Sample> asked, SampleDose dose, String head) {
+public record SampleRecord(Sample sample, Optional<Sample> asked, SampleDose dose, String head) {
   SampleRecord with(SampleDose newDose) {
     return new SampleRecord(sample, asked, newDose, head);
   }

@@ -10,8 +10,8 @@ import beamwarden.ledger.Entry;
 import beamwarden.ledger.Entry.Noted.What;
 import beamwarden.ledger.GrantRecord;
 import beamwarden.profile.Profile;
-import beamwarden.queue.JobState;
 import beamwarden.quantity.Current;
+import beamwarden.queue.JobState;
 import java.util.Optional;
 
 /** Turns receipts, readings and faults into entries. */
@@ -58,8 +58,8 @@ final class Booking {
   }
 
   /**
-   * Books a current reading. One that leaves its bounds stops the night; one that shows more than an
-   * earlier grant counted on raises what was booked since the reading before.
+   * Books a current reading. One that leaves its bounds stops the night; one that shows more than
+   * an earlier grant counted on raises what was booked since the reading before.
    */
   static void reading(Turn turn, Profile profile, CurrentReading reading) {
     CurrentMeter meter = profile.abilities().meter();

@@ -38,8 +38,7 @@ sealed interface Doing {
    * @param settings what the column is set to
    * @param due when an answer is overdue
    */
-  record Measuring(long request, String job, BeamSettings settings, Instant due)
-      implements Doing {}
+  record Measuring(long request, String job, BeamSettings settings, Instant due) implements Doing {}
 
   /**
    * It winds down.

@@ -22,8 +22,8 @@ import org.slf4j.LoggerFactory;
 /**
  * Carries out what the steps of a {@link Run} want: stores entries, speaks to the instrument.
  *
- * <p>Owned by one thread: every call comes from it. The outcome of a commit is the next event a step
- * sees, before anything else that may have arrived meanwhile.
+ * <p>Owned by one thread: every call comes from it. The outcome of a commit is the next event a
+ * step sees, before anything else that may have arrived meanwhile.
  */
 public final class Engine {
   private static final Logger LOGGER = LoggerFactory.getLogger(Engine.class);

@@ -86,13 +86,12 @@ final class ExposureSteps {
 
   private boolean mayExpose(Turn turn, String job) {
     return turn.books.stopped().isEmpty()
-        && turn.books
-            .job(job)
-            .filter(record -> record.state() == JobState.RUNNING)
-            .isPresent();
+        && turn.books.job(job).filter(record -> record.state() == JobState.RUNNING).isPresent();
   }
 
-  /** The latest start is counted from when the heartbeat's answer came: the adapter got it before. */
+  /**
+   * The latest start is counted from when the heartbeat's answer came: the adapter got it before.
+   */
   private Grant grant(Turn turn, Slot slot, Instant limit) {
     Delivery inFull = slot.opened().inFull();
     return new Grant(
@@ -188,7 +187,9 @@ final class ExposureSteps {
             () -> send(turn, slot.get(), turn.now));
   }
 
-  /** What the dose rules say of a receipt, and what only the run knows: how much time has passed. */
+  /**
+   * What the dose rules say of a receipt, and what only the run knows: how much time has passed.
+   */
   private Receiving judge(Turn turn, Slot slot, Receipt receipt) {
     Delivery inFull = slot.opened().inFull();
     Duration passed = Duration.between(slot.sent(), turn.now);
@@ -205,8 +206,7 @@ final class ExposureSteps {
 
   void trouble(Turn turn, Fault fault) {
     turn.note(What.FAULT, fault.message());
-    if (fault.kind().remedy() == FaultKind.Remedy.STOP_NIGHT
-        && turn.books.stopped().isEmpty()) {
+    if (fault.kind().remedy() == FaultKind.Remedy.STOP_NIGHT && turn.books.stopped().isEmpty()) {
       turn.note(What.STOPPED, fault.message());
     }
     turn.view = turn.view.unprepared();

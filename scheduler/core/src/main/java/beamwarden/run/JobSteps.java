@@ -140,8 +140,7 @@ final class JobSteps {
   }
 
   static void hold(Turn turn, JobRecord record, HeldFor what, String because) {
-    turn.write(
-        new Entry.JobChanged(record.job().id(), JobState.HELD, Optional.of(what), because));
+    turn.write(new Entry.JobChanged(record.job().id(), JobState.HELD, Optional.of(what), because));
   }
 
   static void change(Turn turn, JobRecord record, JobState state, String because) {

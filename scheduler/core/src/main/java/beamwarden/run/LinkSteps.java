@@ -19,9 +19,9 @@ import java.util.Set;
 /**
  * Connecting and sealing: how a run comes to be allowed to send grants.
  *
- * <p>Offline → connecting → fencing → sealing → online. After a lost connection, an answer that does
- * not come, or a receipt that is overdue, it begins again; nothing is sent before the instrument is
- * sealed under a fence that was raised for this very sealing.
+ * <p>Offline → connecting → fencing → sealing → online. After a lost connection, an answer that
+ * does not come, or a receipt that is overdue, it begins again; nothing is sent before the
+ * instrument is sealed under a fence that was raised for this very sealing.
  */
 final class LinkSteps {
   private final RunSetup setup;
@@ -92,10 +92,8 @@ final class LinkSteps {
     if (turn.link.phase() != Link.Phase.CONNECTING) {
       return;
     }
-    turn.link =
-        new Link(Link.Phase.FENCING, turn.now, turn.link.fence(), connected.session());
-    Optional<String> weaker =
-        Guarantees.weaker(setup.profile().abilities(), connected.abilities());
+    turn.link = new Link(Link.Phase.FENCING, turn.now, turn.link.fence(), connected.session());
+    Optional<String> weaker = Guarantees.weaker(setup.profile().abilities(), connected.abilities());
     if (weaker.isPresent() && !turn.books.stopped().equals(weaker)) {
       turn.note(What.STOPPED, weaker.get());
     }
@@ -127,8 +125,7 @@ final class LinkSteps {
 
   void fenceRaised(Turn turn, Event.FenceRaised raised) {
     Set<Long> asked = turn.books.unresolved().keySet();
-    turn.link =
-        new Link(Link.Phase.SEALING, answerDue(turn), raised.fence(), turn.link.session());
+    turn.link = new Link(Link.Phase.SEALING, answerDue(turn), raised.fence(), turn.link.session());
     turn.send(new Command.Seal(raised.fence(), asked, turn.books.handOverApproved()));
   }
 
@@ -203,8 +200,7 @@ final class LinkSteps {
     if (turn.link.phase() == Link.Phase.ONLINE) {
       turn.note(What.FAULT, "the connection to the instrument was lost: " + reason);
     }
-    turn.link =
-        turn.link.to(Link.Phase.OFFLINE, turn.now.plus(setup.waits().reconnectAfter()));
+    turn.link = turn.link.to(Link.Phase.OFFLINE, turn.now.plus(setup.waits().reconnectAfter()));
     turn.doing = new Doing.Nothing();
     turn.current = Optional.empty();
     turn.next = Optional.empty();

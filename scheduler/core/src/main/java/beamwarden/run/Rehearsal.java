@@ -71,8 +71,7 @@ public final class Rehearsal implements Engine.Outlet {
     RunState now = state();
     boolean waitsForPeople =
         now.books().jobs().stream()
-            .allMatch(
-                job -> job.state().ended() || job.heldFor().isPresent());
+            .allMatch(job -> job.state().ended() || job.heldFor().isPresent());
     boolean parked = now.view().parked() && now.doing() instanceof Doing.Nothing;
     return now.halted().isPresent()
         || (parked && (waitsForPeople || now.books().stopped().isPresent()));

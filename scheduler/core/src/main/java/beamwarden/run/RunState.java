@@ -3,7 +3,6 @@ package beamwarden.run;
 import beamwarden.instrument.StopWhen;
 import beamwarden.ledger.Books;
 import beamwarden.ledger.Entry;
-import java.time.Instant;
 import java.util.List;
 import java.util.Optional;
 import java.util.Set;

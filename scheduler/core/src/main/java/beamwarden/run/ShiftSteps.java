@@ -70,8 +70,7 @@ final class ShiftSteps {
   void rest(Turn turn, String why) {
     turn.standingBy = why;
     if (!turn.view.parked()) {
-      Instant due =
-          turn.now.plus(setup.profile().windDown()).plus(setup.waits().answerWithin());
+      Instant due = turn.now.plus(setup.profile().windDown()).plus(setup.waits().answerWithin());
       turn.doing = new Doing.WindingDown(due);
       turn.send(new Command.WindDown());
     }

@@ -56,8 +56,7 @@ final class Wakes {
         Beat beat = state.beat();
         if (beat.sent() > 0) {
           wakes.add(
-              new Wake(
-                  beat.sentAt().plus(setup.waits().heartbeatEvery()), Wake.Reason.HEARTBEAT));
+              new Wake(beat.sentAt().plus(setup.waits().heartbeatEvery()), Wake.Reason.HEARTBEAT));
         }
       }
       case FENCING, FOREIGN -> {}

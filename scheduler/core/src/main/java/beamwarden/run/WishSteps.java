@@ -79,9 +79,7 @@ final class WishSteps {
                 sample ->
                     turn.books
                         .sample(sample.id())
-                        .filter(
-                            known ->
-                                !Tightening.of(known.sample(), sample).equals(sample))
+                        .filter(known -> !Tightening.of(known.sample(), sample).equals(sample))
                         .isPresent());
     if (looser) {
       turn.write(

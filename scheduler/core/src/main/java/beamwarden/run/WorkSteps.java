@@ -6,10 +6,10 @@ import beamwarden.beam.Point;
 import beamwarden.beam.SpotScan;
 import beamwarden.dose.CapVerdict;
 import beamwarden.dose.Caps;
+import beamwarden.dose.Deliveries;
 import beamwarden.dose.Delivery;
 import beamwarden.dose.Done;
 import beamwarden.dose.Exposures;
-import beamwarden.dose.Deliveries;
 import beamwarden.estimate.Timings;
 import beamwarden.instrument.Abilities;
 import beamwarden.instrument.CurrentReading;
@@ -86,27 +86,21 @@ final class WorkSteps {
     if (shift.latestStart().filter(start::isAfter).isPresent()) {
       return Optional.empty();
     }
-    Instant end = record.job().deadline().filter(shift.usableEnd()::isAfter)
-        .orElse(shift.usableEnd());
+    Instant end =
+        record.job().deadline().filter(shift.usableEnd()::isAfter).orElse(shift.usableEnd());
     Duration left =
         Duration.between(start, end)
             .minus(Timings.frameStart(whole.get(), abilities()))
             .minus(abilities().blanker().alone().orElse(Duration.ZERO));
     Duration budget =
-        shift
-            .beamOnBudget()
-            .map(most -> most.minus(turn.books.beamOnThisShift()))
-            .orElse(ENDLESS);
+        shift.beamOnBudget().map(most -> most.minus(turn.books.beamOnThisShift())).orElse(ENDLESS);
     Duration most = left.compareTo(budget) < 0 ? left : budget;
-    return most.isNegative() || most.isZero()
-        ? Optional.empty()
-        : next(record, done, sample, most);
+    return most.isNegative() || most.isZero() ? Optional.empty() : next(record, done, sample, most);
   }
 
   private Optional<Exposure> next(
       JobRecord record, Done done, SampleRecord sample, Duration longest) {
-    return Exposures.next(
-        record.job(), sample.sample(), abilities(), done, record.trim(), longest);
+    return Exposures.next(record.job(), sample.sample(), abilities(), done, record.trim(), longest);
   }
 
   /** What is done, with the points that already have their coincidences taken as whole. */
@@ -131,8 +125,7 @@ final class WorkSteps {
 
   /** The time before an exposure can begin. */
   private Duration before(Turn turn, Exposure exposure) {
-    Duration preparation =
-        prepared(turn, exposure) ? Duration.ZERO : preparation(turn, exposure);
+    Duration preparation = prepared(turn, exposure) ? Duration.ZERO : preparation(turn, exposure);
     Duration reading =
         readingFor(turn, exposure, turn.now).isPresent()
             ? Duration.ZERO
@@ -171,8 +164,7 @@ final class WorkSteps {
     long request = turn.nextRequest();
     Instant due =
         turn.now.plus(abilities().meter().readingTakes()).plus(setup.waits().answerWithin());
-    turn.doing =
-        new Doing.Measuring(request, record.job().id(), exposure.conditions().beam(), due);
+    turn.doing = new Doing.Measuring(request, record.job().id(), exposure.conditions().beam(), due);
     turn.send(new Command.Measure(request));
   }
 
@@ -197,8 +189,7 @@ final class WorkSteps {
       return;
     }
     if (record.state() != JobState.RUNNING) {
-      turn.write(
-          new Entry.JobChanged(record.job().id(), JobState.RUNNING, Optional.empty(), ""));
+      turn.write(new Entry.JobChanged(record.job().id(), JobState.RUNNING, Optional.empty(), ""));
     }
     turn.current = Optional.of(open(turn, inFull));
   }
@@ -239,8 +230,7 @@ final class WorkSteps {
         .filter(next -> !(next.scan() instanceof SpotScan) || next.pass() == running.pass())
         .map(next -> planned(turn, next, turn.books.lastGrant() + 1))
         .filter(
-            next ->
-                Caps.admit(sample.sample(), sample.dose(), next) instanceof CapVerdict.Admitted)
+            next -> Caps.admit(sample.sample(), sample.dose(), next) instanceof CapVerdict.Admitted)
         .ifPresent(next -> turn.next = Optional.of(open(turn, next)));
   }
 
@@ -250,8 +240,7 @@ final class WorkSteps {
   }
 
   void prepared(Turn turn, InstrumentEvent.Prepared prepared) {
-    if (!(turn.doing instanceof Doing.Preparing wanted)
-        || wanted.request() != prepared.request()) {
+    if (!(turn.doing instanceof Doing.Preparing wanted) || wanted.request() != prepared.request()) {
       return;
     }
     turn.doing = new Doing.Nothing();
@@ -290,8 +279,7 @@ final class WorkSteps {
   }
 
   void measured(Turn turn, InstrumentEvent.Measured measured) {
-    if (!(turn.doing instanceof Doing.Measuring wanted)
-        || wanted.request() != measured.request()) {
+    if (!(turn.doing instanceof Doing.Measuring wanted) || wanted.request() != measured.request()) {
       return;
     }
     turn.doing = new Doing.Nothing();

@@ -33,7 +33,8 @@ import org.slf4j.LoggerFactory;
 /**
  * The one thread that owns the engine, and the desk in front of it.
  *
- * <p>Web, clock and instrument hand over and return; what they hand over is worked through in order.
+ * <p>Web, clock and instrument hand over and return; what they hand over is worked through in
+ * order.
  */
 final class EngineThread implements Desk, Engine.Outlet, AutoCloseable {
   private static final Logger LOGGER = LoggerFactory.getLogger(EngineThread.class);

@@ -13,8 +13,8 @@ import tools.jackson.databind.json.JsonMapper;
 /**
  * Keeps a store's line of time: real, or paced from a chosen beginning.
  *
- * <p>The line is chosen once, with a new store, and kept in a file; it goes on while no daemon runs.
- * An instrument's process is given the same line.
+ * <p>The line is chosen once, with a new store, and kept in a file; it goes on while no daemon
+ * runs. An instrument's process is given the same line.
  */
 final class LineOfTime {
   private static final JsonMapper JSON = new JsonMapper();

@@ -57,7 +57,8 @@ record StoreFolder(Path root) {
       writePrivately(token(), made + "\n");
       return made;
     } catch (IOException failure) {
-      throw new WiringException("the token in " + root + " cannot be kept: " + failure.getMessage());
+      throw new WiringException(
+          "the token in " + root + " cannot be kept: " + failure.getMessage());
     }
   }
 

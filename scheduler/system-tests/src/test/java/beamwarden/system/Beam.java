@@ -5,7 +5,8 @@ import beamwarden.beam.Rectangle;
 import java.time.Instant;
 
 /**
- * A stretch of beam as the instrument's own record tells it: the truth against which books are held.
+ * A stretch of beam as the instrument's own record tells it: the truth against which books are
+ * held.
  *
  * @param began the first electron
  * @param ended the last electron
@@ -28,8 +29,8 @@ record Beam(
   private static final double SQUARE_METRES_PER_SQUARE_NANOMETRE = 1e-18;
 
   /**
-   * What it gave a place, in e/nm2: evenly over a rectangle; of a spot a Gaussian whose width is the
-   * averaging length.
+   * What it gave a place, in e/nm2: evenly over a rectangle; of a spot a Gaussian whose width is
+   * the averaging length.
    *
    * @param place the place, in sample coordinates
    * @param sigmaMetres the rms width over which a cap averages
@@ -47,8 +48,6 @@ record Beam(
     boolean inside =
         Math.abs(own.xMetres()) < outline.widthMetres() / 2
             && Math.abs(own.yMetres()) < outline.heightMetres() / 2;
-    return inside
-        ? electrons / outline.areaSquareMetres() * SQUARE_METRES_PER_SQUARE_NANOMETRE
-        : 0;
+    return inside ? electrons / outline.areaSquareMetres() * SQUARE_METRES_PER_SQUARE_NANOMETRE : 0;
   }
 }

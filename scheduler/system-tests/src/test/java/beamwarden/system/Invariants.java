@@ -30,10 +30,10 @@ import java.util.SplittableRandom;
 /**
  * What must be true of books and beam at every moment of every night, by name.
  *
- * <p>Holds what the books say against the instrument's own record. The record is summed here by brute
- * force, with formulas of this class's own: Kanaya-Okayama for quartz (27.6 nm · A/(Z^0.89 ρ) · E^1.67
- * with the weight-mean Z and A of SiO2 divided by 0.9948, the ratio of the harmonic to the mean rule
- * at table 4.1 of the physics notes) and a Gaussian for a spot.
+ * <p>Holds what the books say against the instrument's own record. The record is summed here by
+ * brute force, with formulas of this class's own: Kanaya-Okayama for quartz (27.6 nm · A/(Z^0.89 ρ)
+ * · E^1.67 with the weight-mean Z and A of SiO2 divided by 0.9948, the ratio of the harmonic to the
+ * mean rule at table 4.1 of the physics notes) and a Gaussian for a spot.
  */
 final class Invariants {
   private static final double METRES_OUTSIDE_ALLOWED = 60e-6;
@@ -100,8 +100,7 @@ final class Invariants {
     Entry entry = recorded.entry();
     if (entry instanceof Entry.GrantOpened grant) {
       require(
-          opened.put(grant.grant(), grant) == null,
-          "GrantNumbersAreUsedOnce: " + grant.grant());
+          opened.put(grant.grant(), grant) == null, "GrantNumbersAreUsedOnce: " + grant.grant());
       openedAt.put(grant.grant(), recorded.at());
       counted.put(grant.grant(), grant.inFull());
       states.put(grant.grant(), GrantState.OPEN);

@@ -62,8 +62,7 @@ final class Lab {
         Map.of(
             Mode.ELECTRON_IMAGE, mode(100, 100_000, 200_000, Boundary.LINE),
             Mode.INTENSITY_MAP, mode(200, 10_000_000, 200_000, Boundary.LINE),
-            Mode.PHOTON_CORRELATION,
-                mode(1_000_000_000L, 30_000_000_000L, 0, Boundary.SLICE));
+            Mode.PHOTON_CORRELATION, mode(1_000_000_000L, 30_000_000_000L, 0, Boundary.SLICE));
     Probe probe = new Probe(new Voltage(8e3), new Current(350e-12), new Length(6e-9));
     return new Abilities(
         "north-room",

@@ -72,10 +72,9 @@ final class RandomQueue {
     List<Area> areas =
         List.of(
             new Area("kept", Rectangle.of(new Point(20e-6, 20e-6), 40e-6, 30e-6), Area.Use.CAPPED),
-            new Area("never", Rectangle.of(new Point(-250e-6, 0), 20e-6, 20e-6),
-                Area.Use.KEEP_OUT),
-            new Area("spent", Rectangle.of(new Point(0, 300e-6), 40e-6, 40e-6),
-                Area.Use.SACRIFICIAL));
+            new Area("never", Rectangle.of(new Point(-250e-6, 0), 20e-6, 20e-6), Area.Use.KEEP_OUT),
+            new Area(
+                "spent", Rectangle.of(new Point(0, 300e-6), 40e-6, 40e-6), Area.Use.SACRIFICIAL));
     return new Sample(
         "s" + number, "drawn", Optional.of(new Material("SiO2", 2.65)), placement, areas, caps);
   }
