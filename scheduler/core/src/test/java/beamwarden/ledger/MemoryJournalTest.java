@@ -22,7 +22,7 @@ class MemoryJournalTest {
   }
 
   private static Entry voided(long grant, String sample) {
-    return new Entry.GrantVoided(grant, sample, "never begun");
+    return new Entry.GrantVoided(grant, sample, false, "never begun");
   }
 
   private static List<Long> numbers(Journal journal) {

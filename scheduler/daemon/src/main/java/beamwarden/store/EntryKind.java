@@ -15,6 +15,7 @@ enum EntryKind {
   SAMPLE_DECLARED("sample-declared", Entry.SampleDeclared.class),
   JOB_CHANGED("job-changed", Entry.JobChanged.class),
   JOB_TRIMMED("job-trimmed", Entry.JobTrimmed.class),
+  JOB_FAULTED("job-faulted", Entry.JobFaulted.class),
   GRANT_OPENED("grant-opened", Entry.GrantOpened.class),
   GRANT_BOOKED("grant-booked", Entry.GrantBooked.class),
   GRANT_VOIDED("grant-voided", Entry.GrantVoided.class),

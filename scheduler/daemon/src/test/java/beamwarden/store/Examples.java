@@ -16,6 +16,7 @@ import beamwarden.beam.Scan;
 import beamwarden.beam.SpotScan;
 import beamwarden.dose.Delivery;
 import beamwarden.dose.Tolerances;
+import beamwarden.dose.Trim;
 import beamwarden.instrument.CurrentReading;
 import beamwarden.instrument.DataFile;
 import beamwarden.instrument.Fault;
@@ -32,6 +33,7 @@ import beamwarden.queue.Area;
 import beamwarden.queue.AtCap;
 import beamwarden.queue.Averaging;
 import beamwarden.queue.Cap;
+import beamwarden.queue.HeldFor;
 import beamwarden.queue.Job;
 import beamwarden.queue.JobState;
 import beamwarden.queue.Material;
@@ -61,7 +63,7 @@ final class Examples {
   }
 
   static Entry voided(long grant, String sample) {
-    return new Entry.GrantVoided(grant, sample, "the seal says that it never began");
+    return new Entry.GrantVoided(grant, sample, false, "the seal says that it never began");
   }
 
   /** At least one of each. */
@@ -71,9 +73,14 @@ final class Examples {
     all.add(new Entry.QueueSubmitted(queue(), "5d41".repeat(16)));
     all.add(new Entry.SampleDeclared(sample(), "the owner was asked"));
     for (JobState state : JobState.values()) {
-      all.add(new Entry.JobChanged("survey", state, "said „so“ \u2014 µm, \u0000 and \"quotes\""));
+      Optional<HeldFor> held =
+          state == JobState.HELD ? Optional.of(HeldFor.PLACEMENTS) : Optional.empty();
+      all.add(
+          new Entry.JobChanged(
+              "survey", state, held, "said „so“ \u2014 µm, \u0000 and \"quotes\""));
     }
-    all.add(new Entry.JobTrimmed("survey", 400, 3, "the cap leaves 60 e/nm2"));
+    all.add(new Entry.JobTrimmed("survey", new Trim(400, 3), "the cap leaves 60 e/nm2"));
+    all.add(new Entry.JobFaulted("survey"));
     all.add(new Entry.GrantOpened(delivery(raster()), Duration.ofMillis(57_601), "session-3"));
     all.add(new Entry.GrantBooked(delivery(raster()), receipt(Optional.empty())));
     all.add(voided(3, "sst-07"));
