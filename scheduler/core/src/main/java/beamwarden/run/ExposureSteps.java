@@ -51,15 +51,15 @@ final class ExposureSteps {
   }
 
   private void stopWhereNeeded(Turn turn, Slot slot, Instant usableEnd) {
-    boolean now =
-        turn.books.stopped().isPresent() && !turn.stopWish.equals(Optional.of(StopWhen.AT_BOUNDARY))
-            || !turn.now.isBefore(usableEnd);
+    boolean atOnce = !turn.stopWish.equals(Optional.of(StopWhen.AT_BOUNDARY));
+    boolean stopped = turn.books.stopped().isPresent();
+    boolean now = (stopped && atOnce) || !turn.now.isBefore(usableEnd);
     boolean jobMayGoOn =
         turn.books
             .job(slot.opened().exposure().job())
             .filter(job -> job.state() == JobState.RUNNING)
             .isPresent();
-    if (slot.stopping() || !(now || turn.books.stopped().isPresent() || !jobMayGoOn)) {
+    if (slot.stopping() || (!now && !stopped && jobMayGoOn)) {
       return;
     }
     turn.current = Optional.of(slot.asStopping());

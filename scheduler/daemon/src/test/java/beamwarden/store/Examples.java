@@ -73,11 +73,14 @@ final class Examples {
     all.add(new Entry.QueueSubmitted(queue(), "5d41".repeat(16)));
     all.add(new Entry.SampleDeclared(sample(), "the owner was asked"));
     for (JobState state : JobState.values()) {
-      Optional<HeldFor> held =
-          state == JobState.HELD ? Optional.of(HeldFor.PLACEMENTS) : Optional.empty();
-      all.add(
-          new Entry.JobChanged(
-              "survey", state, held, "said „so“ \u2014 µm, \u0000 and \"quotes\""));
+      if (state != JobState.HELD) {
+        all.add(
+            new Entry.JobChanged(
+                "survey", state, Optional.empty(), "said „so“ \u2014 µm, \u0000 and \"quotes\""));
+      }
+    }
+    for (HeldFor what : HeldFor.values()) {
+      all.add(new Entry.JobChanged("survey", JobState.HELD, Optional.of(what), "held"));
     }
     all.add(new Entry.JobTrimmed("survey", new Trim(400, 3), "the cap leaves 60 e/nm2"));
     all.add(new Entry.JobFaulted("survey"));
