@@ -18,7 +18,7 @@ import java.util.Set;
  * at its end, whose outcome is the next event; only when nothing is to be stored does the step look
  * for the next thing to do. So every decision rests on books that are on disk.
  *
- * <p>{@link JobSteps} lists how a job changes its state.
+ * <p>The instrument, as people see it: see {@link InstrumentState}. Jobs: see {@link JobSteps}.
  */
 public final class Run {
   private final RunSetup setup;

@@ -47,6 +47,16 @@ public record RunState(
     toAcknowledge = Set.copyOf(toAcknowledge);
   }
 
+  /** What the instrument is doing, as people see it. */
+  public InstrumentState instrument() {
+    return InstrumentState.of(this);
+  }
+
+  /** The exposure that is being made, if one is. */
+  public Optional<Exposing> exposing() {
+    return current.filter(Slot::sentOut).map(slot -> new Exposing(slot.opened(), slot.unitsDone()));
+  }
+
   /** The same, with everything stopped for good. */
   RunState haltedBecause(String reason) {
     return new RunState(
