@@ -3,6 +3,7 @@ package beamwarden.ledger;
 import beamwarden.dose.Done;
 import beamwarden.dose.Trim;
 import beamwarden.instrument.Receipt;
+import beamwarden.queue.Acquisition;
 import beamwarden.queue.HeldFor;
 import beamwarden.queue.Job;
 import beamwarden.queue.JobState;
@@ -102,6 +103,30 @@ public record JobRecord(
 
   JobRecord faulted() {
     return with(done, trim, coincidences, exposures, faultsInARow + 1, started);
+  }
+
+  /** Whether a count that ends with enough coincidences has enough at a point. */
+  public boolean enough(int pass) {
+    return enough(pass, 0);
+  }
+
+  /** The same, with coincidences that are not booked yet. */
+  public boolean enough(int pass, long more) {
+    return job.acquisition() instanceof Acquisition.Spot spot
+        && spot.coincidences().isPresent()
+        && coincidences.getOrDefault(pass, 0L) + more >= spot.coincidences().getAsLong();
+  }
+
+  /** What is done, with the points that have enough coincidences taken as whole. */
+  public Done effectiveDone() {
+    Done whole = done;
+    for (int pass : coincidences.keySet()) {
+      if (enough(pass)) {
+        long all = ((Acquisition.Spot) job.acquisition()).longest().toNanos();
+        whole = whole.plus(pass, Math.max(0, all - whole.units(pass)));
+      }
+    }
+    return whole;
   }
 
   private JobRecord with(

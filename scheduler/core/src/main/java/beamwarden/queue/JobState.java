@@ -31,6 +31,11 @@ public enum JobState {
     };
   }
 
+  /** Whether what comes after it may begin. */
+  public boolean satisfies() {
+    return this == DONE || this == SHORTENED;
+  }
+
   /** The state's name for people. */
   public String text() {
     return name().toLowerCase(Locale.ROOT);

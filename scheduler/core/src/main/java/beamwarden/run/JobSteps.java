@@ -58,17 +58,15 @@ final class JobSteps {
     boolean timely = record.job().earliest().filter(turn.now::isBefore).isEmpty();
     return timely
         && record.job().after().stream()
-            .allMatch(before -> turn.books.job(before).filter(JobSteps::satisfied).isPresent());
-  }
-
-  private static boolean satisfied(JobRecord before) {
-    return before.state() == JobState.DONE || before.state() == JobState.SHORTENED;
+            .allMatch(
+                before ->
+                    turn.books.job(before).filter(one -> one.state().satisfies()).isPresent());
   }
 
   private boolean holdBehind(Turn turn, JobRecord record) {
     for (String id : record.job().after()) {
       Optional<JobRecord> before = turn.books.job(id);
-      if (before.isPresent() && before.get().state().ended() && !satisfied(before.get())) {
+      if (before.isPresent() && before.get().state().ended() && !before.get().state().satisfies()) {
         hold(
             turn,
             record,

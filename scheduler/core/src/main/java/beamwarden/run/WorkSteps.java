@@ -22,7 +22,6 @@ import beamwarden.queue.JobState;
 import beamwarden.shift.Shift;
 import java.time.Duration;
 import java.time.Instant;
-import java.util.Map;
 import java.util.Optional;
 
 /**
@@ -60,7 +59,7 @@ final class WorkSteps {
 
   private boolean expose(Turn turn, JobRecord record, Shift shift) {
     SampleRecord sample = turn.books.sample(record.job().sample()).orElseThrow();
-    Optional<Exposure> exposure = fitting(turn, record, effectiveDone(record), sample, shift);
+    Optional<Exposure> exposure = fitting(turn, record, record.effectiveDone(), sample, shift);
     if (exposure.isEmpty()) {
       return false;
     }
@@ -103,23 +102,10 @@ final class WorkSteps {
     return Exposures.next(record.job(), sample.sample(), abilities(), done, record.trim(), longest);
   }
 
-  /** What is done, with the points that already have their coincidences taken as whole. */
-  private Done effectiveDone(JobRecord record) {
-    Done done = record.done();
-    for (Map.Entry<Integer, Long> counted : record.coincidences().entrySet()) {
-      int pass = counted.getKey();
-      if (CountRule.reached(record, pass)) {
-        long all = Exposures.pass(record.job(), pass, abilities()).whole().units();
-        done = done.plus(pass, Math.max(0, all - done.units(pass)));
-      }
-    }
-    return done;
-  }
-
   /** Whether a job has nothing left to expose. */
   boolean nothingLeft(JobRecord record, SampleRecord sample) {
     return Exposures.next(
-            record.job(), sample.sample(), abilities(), effectiveDone(record), record.trim())
+            record.job(), sample.sample(), abilities(), record.effectiveDone(), record.trim())
         .isEmpty();
   }
 
@@ -220,7 +206,7 @@ final class WorkSteps {
     Exposure running = slot.opened().exposure();
     JobRecord record = turn.books.job(running.job()).orElseThrow();
     SampleRecord sample = turn.books.sample(running.sample()).orElseThrow();
-    Done done = effectiveDone(record).plus(running.pass(), running.scan().units());
+    Done done = record.effectiveDone().plus(running.pass(), running.scan().units());
     Duration left = Timings.exposure(running, abilities());
     Instant start = turn.now.plus(left);
     fitting(turn, record, done, sample, shift)
