@@ -101,7 +101,7 @@ final class ExposingPromises {
   }
 
   static void p03(Trial trial) {
-    Exposure exposure = trial.exposures().longOne();
+    Exposure exposure = trial.exposures().ofLines(5);
     trial.ready(exposure);
     Grant atOnce = trial.draft(exposure).grant();
     trial.instrument().begin(atOnce);
@@ -175,10 +175,12 @@ final class ExposingPromises {
 
   static void p05(Trial trial) {
     Exposure exposure = trial.exposures().longOne();
-    trial.ready(exposure);
     if (!trial.verdict().provoked(trial.rig().currentRises(), "too high a current")) {
       return;
     }
+    trial.restart();
+    trial.seal();
+    trial.prepare(exposure);
     Grant grant = trial.begun(trial.draft(exposure));
     Receipt receipt = trial.awaitEnded(grant).event().receipt();
     trial.require(
@@ -200,7 +202,7 @@ final class ExposingPromises {
     trial.passInto(grant, 0.3);
     Instant asked = trial.now();
     trial.instrument().stop(StopWhen.NOW);
-    endsEarly(trial, grant, asked.plus(trial.beats(2)));
+    endsEarly(trial, grant, asked.plus(trial.beats(4)));
   }
 
   private static void atTheNextLine(Trial trial, Exposure raster) {
@@ -211,11 +213,11 @@ final class ExposingPromises {
     Instant asked = trial.now();
     trial.instrument().stop(StopWhen.AT_BOUNDARY);
     Duration line = raster.scan().duration().dividedBy(raster.scan().units());
-    Receipt receipt = endsEarly(trial, running, asked.plus(line).plus(trial.beats(2)));
+    Receipt receipt = endsEarly(trial, running, asked.plus(line).plus(trial.beats(4)));
     trial.require(
         receipt.unitsDone() == receipt.unitsTouched() && receipt.unitsDone() > 0,
         "a stop at the boundary left a line half done: " + receipt);
-    trial.pass(raster.scan().duration());
+    trial.pass(trial.beats(20));
     trial.staysRefused(waiting, "it had not started when the stop came");
   }
 

@@ -31,14 +31,19 @@ final class Exposures {
     this.rig = rig;
   }
 
-  /** Ten lines of four beats each; else a spot of as long. */
+  /** Ten lines. */
   Exposure longOne() {
-    return raster(LONG_LINES).or(() -> spot(LINE_BEATS * LONG_LINES)).orElseThrow(Exposures::none);
+    return ofLines(LONG_LINES);
   }
 
-  /** Two lines of four beats each; else a spot of as long. */
+  /** Two lines. */
   Exposure shortOne() {
-    return raster(2).or(() -> spot(LINE_BEATS * 2)).orElseThrow(Exposures::none);
+    return ofLines(2);
+  }
+
+  /** Some lines of four beats each; else a spot of as long. */
+  Exposure ofLines(int lines) {
+    return raster(lines).or(() -> spot(LINE_BEATS * lines)).orElseThrow(Exposures::none);
   }
 
   /** Some lines that may end after each of them, where the instrument has such a mode. */

@@ -85,7 +85,7 @@ final class HandlingPromises {
     trial.passInto(grant, 0.3);
     end.run();
     Instant ended = trial.now();
-    trial.pass(exposure.scan().duration());
+    trial.pass(trial.beats(10));
     trial.evidence().dark(grant, ended.plus(trial.beats(1)), because);
     trial.restart();
     trial.require(
@@ -123,7 +123,7 @@ final class HandlingPromises {
     trial.require(
         readings.beamBlanked() && readings.valveClosed(),
         "after winding down the readings are " + readings);
-    trial.pass(exposure.scan().duration());
+    trial.pass(trial.beats(10));
     trial.evidence().dark(grant, answer.at(), "the instrument was wound down");
     trial.require(
         !(trial.fate(grant) instanceof GrantFate.NeverBegun),

@@ -31,11 +31,11 @@ public interface Rig extends AutoCloseable {
 
   /**
    * The suite's unit of time: on the adapter's own line, the time in which it surely answers a verb
-   * that needs no beam, and in which it turns the beam off. Exposures last 40 of them.
+   * that needs no beam, and in which it turns the beam off. Exposures last up to 80 of them.
    */
   Duration beat();
 
-  /** The longest time that preparing, measuring or winding down can take. */
+  /** The longest time that connecting, preparing, measuring or winding down can take. */
   default Duration patience() {
     return Duration.ofMinutes(30);
   }
@@ -65,18 +65,23 @@ public interface Rig extends AutoCloseable {
     instrument().close();
   }
 
-  /** Opens the chamber's door and closes it again; the adapter may be restarted meanwhile. */
+  /**
+   * Opens the chamber's door and closes it again.
+   *
+   * <p>The suite {@linkplain #restart() restarts} the adapter after each provocation, so that a rig
+   * may as well hand a fault over at that start.
+   */
   Provocation doorOpens();
 
   /**
-   * Sees to it that during the exposure that begins next, in its first half, the current rises to
-   * twice what was wished.
+   * Sees to it that during the exposure that begins next, at its middle or before, the current
+   * rises well above what a grant allows.
    */
   Provocation currentRises();
 
   /**
-   * Sees to it that during the exposure that begins next, in its first quarter, the connection to
-   * the adapter breaks. The adapter lives on, and {@code connect} brings the connection back.
+   * Sees to it that during the exposure that begins next, at its middle or before, the connection
+   * to the adapter breaks. The adapter lives on, and {@code connect} brings the connection back.
    */
   Provocation connectionBreaks();
 

@@ -21,7 +21,7 @@ final class SealPromises {
     trial.instrument().begin(waiting);
     trial.passInto(running, 0.3);
     Heard<Sealed> sealed = trial.seal(running.number(), waiting.number());
-    trial.pass(exposure.scan().duration().multipliedBy(2));
+    trial.pass(exposure.scan().duration());
     trial.evidence().dark(running, sealed.at(), "the seal had been answered");
     trial.evidence().neverBegan(waiting, "a seal forbade it");
     trial.require(

@@ -12,12 +12,12 @@ import java.time.Instant;
 
 /** P7 to P9: what an adapter does when nobody is there, too late, or not entitled. */
 final class StartingPromises {
-  private static final int LEASE_BEATS = 8;
+  private static final int LEASE_BEATS = 16;
 
   private StartingPromises() {}
 
   static void p07(Trial trial) {
-    Exposure exposure = trial.exposures().longOne();
+    Exposure exposure = trial.exposures().ofLines(5 * LEASE_BEATS / Exposures.LINE_BEATS);
     Duration lease = trial.beats(LEASE_BEATS);
     trial.ready(exposure);
     Grant grant = trial.begun(trial.draft(exposure).lease(lease));
@@ -27,13 +27,13 @@ final class StartingPromises {
         receipt.fault().map(f -> f.kind() == FaultKind.LEASE_ENDED).orElse(false),
         "without a heartbeat an exposure ended with " + receipt.fault());
     trial.evidence().dark(grant, seen.plus(lease).plus(trial.beats(1)), "its lease had ended");
-    alone(trial, exposure, lease);
+    alone(trial);
   }
 
-  /** Keeps a lease alive for twice its length, and tells when the last heartbeat was seen. */
+  /** Keeps a lease alive beyond its length, and tells when the last heartbeat was seen. */
   private static Instant renewed(Trial trial, Grant grant) {
     Instant seen = trial.now();
-    for (int beat = 0; beat < 2 * LEASE_BEATS; beat += 2) {
+    for (int beat = 0; beat < 3 * LEASE_BEATS / 2; beat += 2) {
       trial.pass(trial.beats(2));
       seen = trial.heartbeat().at();
     }
@@ -46,16 +46,22 @@ final class StartingPromises {
     return seen;
   }
 
-  private static void alone(Trial trial, Exposure exposure, Duration lease) {
+  /** Nobody can renew this lease: it ends while the connection is lost. */
+  private static void alone(Trial trial) {
+    Exposure exposure = trial.exposures().longOne();
+    Duration lease = exposure.scan().duration().multipliedBy(3).dividedBy(4);
     if (!trial.verdict().provoked(trial.rig().connectionBreaks(), "a lost connection")) {
       return;
     }
+    trial.restart();
+    trial.seal();
+    trial.prepare(exposure);
     int mark = trial.recorder().mark();
     Draft draft = trial.draft(exposure).lease(lease);
     Instant seen = trial.now();
     Grant grant = trial.begun(draft);
     trial.await(mark, Lost.class, e -> true, exposure.scan().duration());
-    trial.pass(lease.plus(exposure.scan().duration()));
+    trial.pass(exposure.scan().duration());
     trial.connect();
     GrantFate fate = trial.fate(grant);
     trial.evidence().dark(grant, seen.plus(lease).plus(trial.beats(1)), "its lease ended unheard");

@@ -105,7 +105,8 @@ final class Trial {
 
   void connect() {
     Connected connected =
-        ask(() -> instrument().connect(recorder), Connected.class, e -> true, beats(20)).event();
+        ask(() -> instrument().connect(recorder), Connected.class, e -> true, rig.patience())
+            .event();
     session = connected.session();
   }
 

@@ -12,6 +12,7 @@ import beamwarden.instrument.InstrumentListener;
 import beamwarden.instrument.SealReport;
 import beamwarden.instrument.StopWhen;
 import java.io.UncheckedIOException;
+import java.nio.file.Path;
 import java.time.Duration;
 import java.util.HashMap;
 import java.util.Map;
@@ -51,6 +52,15 @@ public final class SimulatedInstrument implements Instrument {
   /** An adapter in memory; its hardware says how it is simulated. */
   public SimulatedInstrument(Hardware hardware, Notes notes) {
     this(hardware, notes, Optional.empty(), () -> {});
+  }
+
+  /**
+   * The same, with its data in a folder, if its hardware's simulation writes any.
+   *
+   * @param data the folder; made when it is missing
+   */
+  public SimulatedInstrument(Hardware hardware, Notes notes, Path data) {
+    this(hardware, notes, Optional.of(new DataFolder(data, hardware.time())), () -> {});
   }
 
   /**
