@@ -26,6 +26,11 @@ record Element(int number, String symbol, double weight) {
     return Optional.ofNullable(BY_SYMBOL.get(symbol));
   }
 
+  /** How many elements are known. */
+  static int count() {
+    return BY_SYMBOL.size();
+  }
+
   private static Map<String, Element> read() {
     try (BufferedReader lines =
         new BufferedReader(
