@@ -104,6 +104,13 @@ record Box(long left, long bottom, long right, long top) {
         Math.max(top, other.top));
   }
 
+  /** One step of the grid in its middle. */
+  Box heart() {
+    long x = Math.floorDiv(left + right, 2);
+    long y = Math.floorDiv(bottom + top, 2);
+    return new Box(x, y, x + 1, y + 1);
+  }
+
   /** Its middle, in metres along its axes. */
   Point middle() {
     return new Point((left + right) * GRID_METRES / 2, (bottom + top) * GRID_METRES / 2);

@@ -22,6 +22,9 @@ import java.util.stream.Stream;
 final class Ground {
   private static final double TAIL_SIGMAS = 8;
 
+  /** How far electrons reach when nobody knows: beyond any sample. */
+  private static final double ANYWHERE_METRES = 1;
+
   private Ground() {}
 
   static Area area(Sample sample, String name) {
@@ -100,12 +103,12 @@ final class Ground {
         && box(area, axes).grown(wider).overlaps(core);
   }
 
-  /** The generation range in metres; infinite when the material is not known. */
+  /** The generation range in metres; beyond any sample when the material is not known. */
   private static double range(PassDose pass, Averages widest) {
     return widest
         .range()
         .map(known -> known.at(pass.key().conditions().beam().voltage()).metres())
-        .orElse(Double.POSITIVE_INFINITY);
+        .orElse(ANYWHERE_METRES);
   }
 
   private static CapVerdict.Refused refused(

@@ -52,12 +52,11 @@ record RasterShape(RasterScan whole, double calibration, List<Lines> lines)
 
   private static double mostOnPixel(Delivery delivery, RasterScan scan, int touched) {
     Current current = delivery.upperCurrent();
-    double shared =
-        current.electronsIn(delivery.upperBeamOn()) / ((double) touched * scan.columns());
-    double most = Math.max(current.electronsIn(scan.dwell()), shared);
-    return delivery.tolerances().blanksFlyback()
-        ? most
-        : most + current.electronsIn(scan.flyback());
+    double inFlyback =
+        delivery.tolerances().blanksFlyback() ? 0 : current.electronsIn(scan.flyback());
+    double inPixels = current.electronsIn(delivery.upperBeamOn()) - touched * inFlyback;
+    double shared = inPixels / ((double) touched * scan.columns());
+    return Math.max(current.electronsIn(scan.dwell()), shared) + inFlyback;
   }
 
   @Override

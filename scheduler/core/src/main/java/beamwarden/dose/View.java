@@ -88,9 +88,10 @@ record View(
         .map(cell -> new Place(cell.fluence(), cell.box(), axes));
   }
 
-  /** What is summed at a place. */
+  /** What other passes sum to in the middle of a place. */
   double sum(List<PassDose> passes, Place place) {
-    return Highest.sum(near(passes, place.cell(), place.axes()), place.cell());
+    Box heart = place.cell().heart();
+    return Highest.sum(near(passes, heart, place.axes()), heart);
   }
 
   /** What is summed at one place, along some axes. */

@@ -108,6 +108,27 @@ final class Fixtures {
         List.of(new Probe(new Voltage(10_000), ONE_NANOAMPERE, new Length(10e-9))));
   }
 
+  static Abilities withProbe(Abilities abilities, double widthNanometres) {
+    return withProbes(
+        abilities,
+        List.of(
+            new Probe(new Voltage(10_000), ONE_NANOAMPERE, new Length(widthNanometres * 1e-9))));
+  }
+
+  static Abilities withProbes(Abilities abilities, List<Probe> probes) {
+    return new Abilities(
+        abilities.instrument(),
+        abilities.stage(),
+        abilities.field(),
+        abilities.column(),
+        abilities.meter(),
+        abilities.blanker(),
+        abilities.filters(),
+        abilities.filterChange(),
+        abilities.modes(),
+        probes);
+  }
+
   static Rectangle square(double x, double y, double width, double height) {
     return Rectangle.of(new Point(x * UM, y * UM), width * UM, height * UM);
   }
