@@ -77,9 +77,20 @@ final class AdapterLink implements Runnable {
     request(to, call);
   }
 
-  /** From here on the listener hears nothing more. */
-  void silence() {
+  /**
+   * Asks the adapter to end; from here on the listener hears nothing more.
+   *
+   * @return false when there is no adapter to ask, and the connection was ended instead
+   */
+  boolean sayBye() {
     quiet = true;
+    Wire to = wire;
+    if (to == null || !greeted || to.reason().isPresent()) {
+      end("closed");
+      return false;
+    }
+    request(to, new Call.Bye());
+    return true;
   }
 
   /** Ends the connection. */
@@ -242,7 +253,7 @@ final class AdapterLink implements Runnable {
   private void tell(InstrumentEvent event) {
     try {
       listener.on(event);
-    } catch (RuntimeException e) {
+    } catch (RuntimeException | Error e) {
       LOGGER.error("the listener failed; the connection is given up", e);
       lastWords = "the daemon failed to take an event";
     }

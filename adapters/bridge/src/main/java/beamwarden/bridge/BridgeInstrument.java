@@ -60,6 +60,9 @@ public final class BridgeInstrument implements Instrument {
 
   private synchronized void ended() {
     link = null;
+    if (closed) {
+      real.close();
+    }
   }
 
   @Override
@@ -128,20 +131,18 @@ public final class BridgeInstrument implements Instrument {
       closed = true;
       last = link;
       events = thread;
+      if (last == null) {
+        real.close();
+        return;
+      }
     }
-    if (last != null) {
-      last.silence();
-      last.send(new Call.Bye());
+    if (last.sayBye() && events != Thread.currentThread()) {
       await(events);
       last.end("closed");
     }
-    real.close();
   }
 
   private void await(Thread events) {
-    if (events == Thread.currentThread()) {
-      return;
-    }
     try {
       events.join(limits.bye().toMillis());
     } catch (InterruptedException e) {

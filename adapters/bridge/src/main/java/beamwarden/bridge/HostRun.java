@@ -51,6 +51,10 @@ final class HostRun {
     } catch (InterruptedException e) {
       Thread.currentThread().interrupt();
       return WORLD_FAILED;
+    } catch (RuntimeException e) {
+      LOGGER.error("the adapter could not be hosted", e);
+      complaints.println("beamwarden host: the adapter failed: " + e.getMessage());
+      return WORLD_FAILED;
     }
   }
 

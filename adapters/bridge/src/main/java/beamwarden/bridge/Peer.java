@@ -7,6 +7,8 @@ import java.net.InetAddress;
 import java.net.InetSocketAddress;
 import java.net.Socket;
 import java.util.Optional;
+import org.slf4j.Logger;
+import org.slf4j.LoggerFactory;
 
 /**
  * The other end of a connection that was just made.
@@ -20,6 +22,7 @@ import java.util.Optional;
  */
 public record Peer(
     String name, InputStream from, OutputStream to, Optional<String> token, Runnable letGo) {
+  private static final Logger LOGGER = LoggerFactory.getLogger(Peer.class);
   private static final int CONNECT_WITHIN_MILLIS = 2000;
 
   /** Connects to a port of this machine. */
@@ -47,8 +50,7 @@ public record Peer(
     try {
       socket.close();
     } catch (IOException e) {
-      // It is of no use any more either way.
-      Thread.onSpinWait();
+      LOGGER.atDebug().addKeyValue("reason", e.getMessage()).log("a socket did not close");
     }
   }
 }

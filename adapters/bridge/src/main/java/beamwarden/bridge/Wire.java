@@ -27,6 +27,11 @@ final class Wire {
   /** How much may wait to be sent before the other side counts as one that does not read. */
   static final long MOST_WAITING_BYTES = 16L * 1024 * 1024;
 
+  /**
+   * How much is written under one watch: a peer that reads slowly is not one that does not read.
+   */
+  private static final int BATCH_BYTES = 64 * 1024;
+
   private static final byte[] LAST = new byte[0];
 
   private final Peer peer;
@@ -134,11 +139,13 @@ final class Wire {
     Timeline.Waiting watch = real.after(writeWithin, this::notRead);
     try {
       byte[] line = first;
+      int written = 0;
       while (line != null && line != LAST) {
         to.write(line);
         to.write('\n');
         waitingBytes.addAndGet(-line.length);
-        line = outbox.poll();
+        written += line.length;
+        line = written < BATCH_BYTES ? outbox.poll() : null;
       }
       to.flush();
       return line != LAST;

@@ -334,6 +334,35 @@ class BridgeInstrumentTest {
   }
 
   @Test
+  void letsTheListenerCloseIt() throws Exception {
+    instrument.connect(
+        event -> {
+          events.on(event);
+          instrument.close();
+        });
+    try (ScriptedPeer peer = ScriptedPeer.accept(port)) {
+      peer.greets();
+      peer.says(BEGUN);
+      peer.hears("{\"jsonrpc\":\"2.0\",\"id\":3,\"method\":\"bye\"}");
+      peer.says(BEGUN);
+      peer.accepts(3);
+    }
+    assertEquals(new InstrumentEvent.Begun(17), events.next());
+    events.nothingMore();
+  }
+
+  @Test
+  void closesAtOnceWhenTheAdapterHasNotGreeted() throws Exception {
+    instrument.connect(events);
+    try (ScriptedPeer peer = ScriptedPeer.accept(port)) {
+      assertTrue(peer.hears().orElseThrow().contains("hello"));
+      instrument.close();
+      assertEquals(Optional.empty(), peer.hears());
+    }
+    events.nothingMore();
+  }
+
+  @Test
   void endsWithoutTheAdaptersConsentWhenItDoesNotAnswerBye() throws Exception {
     try (ScriptedPeer peer = greeted()) {
       instrument.close();

@@ -42,7 +42,7 @@ import tools.jackson.databind.json.JsonMapper;
 
 class ContractJsonTest {
   private static final JsonMapper JSON = ContractJson.mapper();
-  private static final int ROUNDS = 60;
+  private static final int ROUNDS = 40;
 
   /** Every record and closed set that the contract's jar holds. */
   static List<Class<?>> contractTypes() throws IOException, URISyntaxException {

@@ -21,6 +21,9 @@ public final class FakeProvider implements AdapterProvider {
 
   @Override
   public Instrument open(Setting setting, Timeline time) {
+    if (setting.options().containsKey("broken")) {
+      throw new IllegalStateException("the column does not answer");
+    }
     // Over streams this must not get between the messages.
     System.out.println("opening the fake instrument at " + time.instant());
     return new FakeInstrument(() -> note(setting.folder().resolve(CLOSED)));

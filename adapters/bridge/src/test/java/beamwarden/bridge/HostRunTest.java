@@ -13,6 +13,7 @@ import java.nio.file.Path;
 import java.time.Duration;
 import java.time.Instant;
 import java.util.List;
+import java.util.Map;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
 import org.junit.jupiter.params.ParameterizedTest;
@@ -102,6 +103,27 @@ class HostRunTest {
                 settings.toString(),
                 "--streams")));
     complained(settings + " holds no settings: Missing required creator property 'abilities'");
+  }
+
+  @Test
+  void saysWhyAnAdapterDoesNotOpen() throws Exception {
+    Path settings = folder.resolve("settings.json");
+    Files.write(
+        settings,
+        ContractJson.mapper()
+            .writeValueAsBytes(new HostSettings(Examples.ABILITIES, Map.of("broken", "yes"))));
+    assertEquals(
+        3,
+        run(
+            List.of(
+                "--adapter",
+                "fake",
+                "--folder",
+                folder.toString(),
+                "--settings",
+                settings.toString(),
+                "--tcp")));
+    complained("the adapter failed: the column does not answer");
   }
 
   @Test
