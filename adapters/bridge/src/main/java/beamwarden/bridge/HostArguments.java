@@ -1,11 +1,9 @@
 package beamwarden.bridge;
 
-import beamwarden.timing.TimeAnchor;
 import java.nio.file.InvalidPathException;
 import java.nio.file.Path;
 import java.time.DateTimeException;
 import java.time.Duration;
-import java.time.Instant;
 import java.util.ArrayList;
 import java.util.HashMap;
 import java.util.List;
@@ -18,21 +16,18 @@ import java.util.Set;
  * @param adapter the adapter's name
  * @param folder the adapter's own folder
  * @param settings the file with its {@link HostSettings}
- * @param anchor the line of time on which the adapter lives
  * @param idle how long, in real time, it stays without a daemon
  * @param tcp whether it listens on a port, else it uses its standard streams
  */
-record HostArguments(
-    String adapter, Path folder, Path settings, TimeAnchor anchor, Duration idle, boolean tcp) {
+record HostArguments(String adapter, Path folder, Path settings, Duration idle, boolean tcp) {
   /** How long a host stays without a daemon when nothing is said. */
   static final Duration USUAL_IDLE = Duration.ofMinutes(10);
 
   static final String USAGE =
-      "usage: --adapter NAME --folder DIR --settings FILE"
-          + " [--on-line TIME --on-wall TIME --pace N] [--idle DURATION] --tcp | --streams";
+      "usage: --adapter NAME --folder DIR --settings FILE" + " [--idle DURATION] --tcp | --streams";
 
   private static final Set<String> WITH_VALUE =
-      Set.of("--adapter", "--folder", "--settings", "--on-line", "--on-wall", "--pace", "--idle");
+      Set.of("--adapter", "--folder", "--settings", "--idle");
   private static final Set<String> ALONE = Set.of("--tcp", "--streams");
 
   /** The command line that {@link #parse} reads back. */
@@ -45,12 +40,6 @@ record HostArguments(
             folder.toString(),
             "--settings",
             settings.toString(),
-            "--on-line",
-            anchor.onLine().toString(),
-            "--on-wall",
-            anchor.onWall().toString(),
-            "--pace",
-            Double.toString(anchor.pace()),
             "--idle",
             idle.toString(),
             tcp ? "--tcp" : "--streams"));
@@ -71,10 +60,9 @@ record HostArguments(
           needed(given, "--adapter"),
           Path.of(needed(given, "--folder")),
           Path.of(needed(given, "--settings")),
-          anchor(given),
           given.containsKey("--idle") ? Duration.parse(given.get("--idle")) : USUAL_IDLE,
           given.containsKey("--tcp"));
-    } catch (DateTimeException | InvalidPathException | NumberFormatException e) {
+    } catch (DateTimeException | InvalidPathException e) {
       throw new IllegalArgumentException(e.getMessage(), e);
     }
   }
@@ -99,15 +87,5 @@ record HostArguments(
       throw new IllegalArgumentException(name + " is missing");
     }
     return given.get(name);
-  }
-
-  private static TimeAnchor anchor(Map<String, String> given) {
-    if (!given.containsKey("--on-line")) {
-      return TimeAnchor.real();
-    }
-    return new TimeAnchor(
-        Instant.parse(needed(given, "--on-line")),
-        Instant.parse(needed(given, "--on-wall")),
-        Double.parseDouble(needed(given, "--pace")));
   }
 }

@@ -16,6 +16,7 @@ import org.slf4j.LoggerFactory;
 final class HostPort implements AutoCloseable {
   private static final Logger LOGGER = LoggerFactory.getLogger(HostPort.class);
   private static final byte[] LOOPBACK = {127, 0, 0, 1};
+  private static final long MILLIS_AFTER_FAILURE = 100;
   private static final int TOKEN_BYTES = 32;
 
   /** How many may be connected at once: one daemon, one that replaces it, and some strangers. */
@@ -62,8 +63,18 @@ final class HostPort implements AutoCloseable {
       } catch (IOException e) {
         if (!socket.isClosed()) {
           LOGGER.atWarn().addKeyValue("reason", e.getMessage()).log("a connection failed");
+          pause();
         }
       }
+    }
+  }
+
+  /** Whatever made it fail, too many open files for example, is not mended by trying at once. */
+  private static void pause() {
+    try {
+      Thread.sleep(MILLIS_AFTER_FAILURE);
+    } catch (InterruptedException e) {
+      Thread.currentThread().interrupt();
     }
   }
 

@@ -13,15 +13,19 @@ import java.util.Arrays;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import org.slf4j.Logger;
+import org.slf4j.LoggerFactory;
 
 /**
  * An adapter in a process of its own on this machine, which goes on when this process ends.
  *
  * <p>The process is found through the file {@code address} of its folder, and started when the
  * folder's lock says that there is none. It is cut loose from this one: no pipe, no terminal, a
- * session of its own where the system offers {@code setsid}.
+ * session of its own where the system offers {@code setsid}. A host of this program that runs with
+ * other settings than wanted is ended in order, and another one started.
  */
 public final class HostProcess implements PeerStarter {
+  private static final Logger LOGGER = LoggerFactory.getLogger(HostProcess.class);
   private static final String LOG = "host.log";
   private static final String SETTINGS = "settings.json";
   private static final List<String> SMALL_JVM =
@@ -67,10 +71,9 @@ public final class HostProcess implements PeerStarter {
       TimeAnchor anchor) {
     Path home = folder.toAbsolutePath();
     HostArguments arguments =
-        new HostArguments(
-            adapter, home, home.resolve(SETTINGS), anchor, HostArguments.USUAL_IDLE, true);
+        new HostArguments(adapter, home, home.resolve(SETTINGS), HostArguments.USUAL_IDLE, true);
     return new HostProcess(
-        home, java(arguments), Optional.of(new HostSettings(abilities, options)));
+        home, java(arguments), Optional.of(new HostSettings(abilities, options, anchor)));
   }
 
   static List<String> java(HostArguments arguments) {
@@ -87,6 +90,7 @@ public final class HostProcess implements PeerStarter {
   @Override
   public Peer open() throws IOException {
     Address.prepare(folder);
+    endThatOfOtherSettings();
     Optional<Process> started = Optional.empty();
     Optional<Address> left = Optional.empty();
     if (!FolderLock.held(folder)) {
@@ -96,10 +100,35 @@ public final class HostProcess implements PeerStarter {
     return await(started, left);
   }
 
+  /** A changed profile needs another host; the old one blanks the beam as it ends. */
+  private void endThatOfOtherSettings() throws IOException {
+    Path file = folder.resolve(SETTINGS);
+    if (settings.isEmpty() || !FolderLock.held(folder) || Files.notExists(file)) {
+      return;
+    }
+    if (Arrays.equals(wanted(), Files.readAllBytes(file))) {
+      return;
+    }
+    LOGGER.atInfo().addKeyValue("folder", folder).log("ending a host of other settings");
+    Address.in(folder)
+        .flatMap(address -> ProcessHandle.of(address.pid()))
+        .ifPresent(ProcessHandle::destroy);
+    for (int tries = 0; tries < MOST_TRIES && FolderLock.held(folder); tries++) {
+      pause();
+    }
+    if (FolderLock.held(folder)) {
+      throw new IOException(
+          "the adapter in " + folder + " has other settings and does not end; end it first");
+    }
+  }
+
+  private byte[] wanted() {
+    return ContractJson.mapper().writeValueAsBytes(settings.orElseThrow());
+  }
+
   private Process start() throws IOException {
     if (settings.isPresent()) {
-      Address.write(
-          folder.resolve(SETTINGS), ContractJson.mapper().writeValueAsBytes(settings.get()));
+      Address.write(folder.resolve(SETTINGS), wanted());
     }
     List<String> detached = new ArrayList<>();
     setsid().ifPresent(detached::add);

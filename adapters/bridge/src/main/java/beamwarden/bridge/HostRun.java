@@ -67,18 +67,27 @@ final class HostRun {
               + "; end that one first, or give this one another folder");
       return WORLD_FAILED;
     }
-    try (PacedTime time = new PacedTime(arguments.anchor(), "adapter");
-        PacedTime real = new PacedTime(TimeAnchor.real(), "host-watch")) {
-      serve(arguments, time, real);
+    try {
+      hosted(arguments);
       return FINE;
     } finally {
       lock.get().close();
     }
   }
 
-  private void serve(HostArguments arguments, PacedTime time, PacedTime real)
+  private void hosted(HostArguments arguments) throws IOException, InterruptedException {
+    AdapterProvider provider = provider(arguments.adapter());
+    HostSettings settings = settings(arguments.settings());
+    AdapterProvider.Setting setting =
+        new AdapterProvider.Setting(settings.abilities(), arguments.folder(), settings.options());
+    try (PacedTime time = new PacedTime(settings.anchor(), "adapter");
+        PacedTime real = new PacedTime(TimeAnchor.real(), "host-watch")) {
+      serve(arguments, provider.open(setting, time), time, real);
+    }
+  }
+
+  private void serve(HostArguments arguments, Instrument instrument, PacedTime time, PacedTime real)
       throws IOException, InterruptedException {
-    Instrument instrument = provider(arguments.adapter()).open(setting(arguments), time);
     Optional<HostPort> port = arguments.tcp() ? Optional.of(HostPort.open()) : Optional.empty();
     Host host =
         new Host(
@@ -120,15 +129,12 @@ final class HostRun {
     }
   }
 
-  private static AdapterProvider.Setting setting(HostArguments arguments) throws IOException {
-    byte[] content = Files.readAllBytes(arguments.settings());
+  private static HostSettings settings(Path file) throws IOException {
+    byte[] content = Files.readAllBytes(file);
     try {
-      HostSettings settings = ContractJson.mapper().readValue(content, HostSettings.class);
-      return new AdapterProvider.Setting(
-          settings.abilities(), arguments.folder(), settings.options());
+      return ContractJson.mapper().readValue(content, HostSettings.class);
     } catch (JacksonException e) {
-      throw new IllegalArgumentException(
-          arguments.settings() + " holds no settings: " + e.getOriginalMessage(), e);
+      throw new IllegalArgumentException(file + " holds no settings: " + e.getOriginalMessage(), e);
     }
   }
 

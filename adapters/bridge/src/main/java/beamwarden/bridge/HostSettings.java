@@ -1,6 +1,7 @@
 package beamwarden.bridge;
 
 import beamwarden.instrument.Abilities;
+import beamwarden.timing.TimeAnchor;
 import java.util.Map;
 
 /**
@@ -8,8 +9,9 @@ import java.util.Map;
  *
  * @param abilities what the profile says of the instrument
  * @param options anything else, by name
+ * @param anchor the line of time on which the adapter lives
  */
-record HostSettings(Abilities abilities, Map<String, String> options) {
+record HostSettings(Abilities abilities, Map<String, String> options, TimeAnchor anchor) {
   HostSettings {
     options = Map.copyOf(options);
   }

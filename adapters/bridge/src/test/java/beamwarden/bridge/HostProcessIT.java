@@ -94,12 +94,13 @@ class HostProcessIT {
   private Path settings() throws IOException {
     Path file = folder.resolve("given.json");
     byte[] content =
-        ContractJson.mapper().writeValueAsBytes(new HostSettings(Examples.ABILITIES, Map.of()));
+        ContractJson.mapper()
+            .writeValueAsBytes(new HostSettings(Examples.ABILITIES, Map.of(), TimeAnchor.real()));
     return Files.write(file, content);
   }
 
   private HostArguments arguments(Duration idle, boolean tcp) throws IOException {
-    return new HostArguments("fake", folder, settings(), TimeAnchor.real(), idle, tcp);
+    return new HostArguments("fake", folder, settings(), idle, tcp);
   }
 
   @Test
@@ -158,6 +159,26 @@ class HostProcessIT {
     assertTrue(closed());
     instrument.close();
     events.nothingMore();
+  }
+
+  @Test
+  void isReplacedWhenTheProfileHasChanged() throws Exception {
+    BridgeInstrument before = connected();
+    ProcessHandle first = host();
+    Events later = new Events();
+    try (BridgeInstrument instrument =
+        new BridgeInstrument(
+            HostProcess.ofAdapter(
+                "fake", folder, Examples.ABILITIES, Map.of("seed", "8"), TimeAnchor.real()))) {
+      instrument.connect(later);
+      later.next(InstrumentEvent.Connected.class);
+      assertTrue(closed(), "the first host has let go of the instrument");
+      Files.delete(folder.resolve(FakeProvider.CLOSED));
+      assertNotEquals(first.pid(), host().pid());
+      assertFalse(first.isAlive());
+    }
+    events.lost();
+    before.close();
   }
 
   @Test

@@ -11,7 +11,6 @@ import java.io.PrintStream;
 import java.nio.file.Files;
 import java.nio.file.Path;
 import java.time.Duration;
-import java.time.Instant;
 import java.util.List;
 import java.util.Map;
 import org.junit.jupiter.api.Test;
@@ -47,9 +46,7 @@ class HostRunTest {
         "--adapter fake --tcp --streams|say either --tcp or --streams",
         "--adapter|'--adapter' is unknown or lacks its value",
         "--loud|'--loud' is unknown or lacks its value",
-        "--adapter fake --folder f --settings s --idle soon --tcp|Text cannot be parsed",
-        "--adapter fake --folder f --settings s --on-line now --on-wall now --pace 1 --tcp|Text 'now'",
-        "--adapter fake --folder f --settings s --on-line 2031-03-12T18:00:00Z --tcp|--on-wall is missing"
+        "--adapter fake --folder f --settings s --idle soon --tcp|Text cannot be parsed"
       })
   void refusesAWrongCommandLine(String words, String sentence) {
     assertEquals(2, run(List.of(words.split(" "))));
@@ -63,10 +60,6 @@ class HostRunTest {
             "simulated",
             Path.of("/var/lib/north room"),
             Path.of("/var/lib/north room/settings.json"),
-            new TimeAnchor(
-                Instant.parse("2031-03-12T18:00:00Z"),
-                Instant.parse("2026-02-03T10:11:12.000000013Z"),
-                600.1),
             Duration.ofMinutes(3),
             true);
     assertEquals(arguments, HostArguments.parse(arguments.toList()));
@@ -111,7 +104,8 @@ class HostRunTest {
     Files.write(
         settings,
         ContractJson.mapper()
-            .writeValueAsBytes(new HostSettings(Examples.ABILITIES, Map.of("broken", "yes"))));
+            .writeValueAsBytes(
+                new HostSettings(Examples.ABILITIES, Map.of("broken", "yes"), TimeAnchor.real())));
     assertEquals(
         3,
         run(
