@@ -7,6 +7,18 @@ final class Counting {
   /** From this mean on a normal distribution is near enough, and much faster. */
   static final double NORMAL_FROM = 30;
 
+  /** Far beyond any count below {@link #NORMAL_FROM} that a random number can reach. */
+  private static final int MOST_BELOW_NORMAL = 150;
+
+  /** One over each whole number: the loop below is quicker without divisions. */
+  private static final double[] ONE_OVER = new double[MOST_BELOW_NORMAL + 1];
+
+  static {
+    for (int number = 1; number <= MOST_BELOW_NORMAL; number++) {
+      ONE_OVER[number] = 1.0 / number;
+    }
+  }
+
   private Counting() {}
 
   /**
@@ -24,11 +36,11 @@ final class Counting {
     }
     double left = random.nextDouble();
     double share = Math.exp(-mean);
-    long count = 0;
-    while (left > share && share > Double.MIN_NORMAL) {
+    int count = 0;
+    while (left > share && count < MOST_BELOW_NORMAL) {
       left -= share;
       count++;
-      share *= mean / count;
+      share *= mean * ONE_OVER[count];
     }
     return count;
   }

@@ -33,7 +33,7 @@ public final class Hardware {
   private final Imperfection imperfection;
   private final Timeline time;
   private final DeliveredRecord record;
-  private final Consumer<String> memory;
+  private final Consumer<HardwareState> memory;
   private final HardwareState state;
   private Watcher watcher = Watcher.NOBODY;
   private Timeline.Waiting scanEnd = () -> {};
@@ -44,8 +44,8 @@ public final class Hardware {
       Simulation simulation,
       Timeline time,
       DeliveredRecord record,
-      Optional<String> remembered,
-      Consumer<String> memory) {
+      Optional<HardwareState> remembered,
+      Consumer<HardwareState> memory) {
     if (abilities.blanker().kind() == Blanker.Kind.NONE) {
       throw new IllegalArgumentException(
           "the simulated instrument needs a blanker: a profile with none would leave the beam on a"
@@ -57,8 +57,7 @@ public final class Hardware {
     this.time = time;
     this.record = record;
     this.memory = memory;
-    this.state =
-        remembered.map(HardwareState::read).orElseGet(() -> new HardwareState(time.instant()));
+    this.state = remembered.orElseGet(() -> new HardwareState(time.instant()));
     if (state.run.filter(run -> record.holds(run.grant(), run.fence())).isPresent()) {
       state.run = Optional.empty();
     }
@@ -68,7 +67,7 @@ public final class Hardware {
   /** An instrument in memory, switched on now. */
   public static Hardware inMemory(
       Abilities abilities, Simulation simulation, Timeline time, DeliveredRecord record) {
-    return new Hardware(abilities, simulation, time, record, Optional.empty(), line -> {});
+    return new Hardware(abilities, simulation, time, record, Optional.empty(), state -> {});
   }
 
   /** Somebody opens the door: the interlock takes the beam, and a new chamber session begins. */
@@ -128,6 +127,7 @@ public final class Hardware {
 
   /** Whoever drives it from now on; a scan that an earlier adapter left running is blanked. */
   void drivenBy(Watcher next) {
+    watcher.replaced();
     watcher = next;
     cutNow();
   }
@@ -348,7 +348,7 @@ public final class Hardware {
 
   private void save() {
     if (!abandoned) {
-      memory.accept(state.line());
+      memory.accept(state);
     }
   }
 }

@@ -10,7 +10,6 @@ import java.util.Optional;
 import java.util.Set;
 import java.util.TreeMap;
 import java.util.TreeSet;
-import java.util.function.Consumer;
 
 /**
  * The adapter's durable notes: the fence and the store to which it is bound, which grants began,
@@ -21,17 +20,17 @@ import java.util.function.Consumer;
  */
 public final class Notes {
   private final Map<String, OfStore> stores = new HashMap<>();
-  private final Consumer<String> keep;
+  private final Optional<DurableFile> file;
   private long fence;
   private String store = "";
 
-  private Notes(Consumer<String> keep) {
-    this.keep = keep;
+  private Notes(Optional<DurableFile> file) {
+    this.file = file;
   }
 
   /** Notes in memory: they outlive the adapter object and nothing else. */
   public static Notes inMemory() {
-    return new Notes(line -> {});
+    return new Notes(Optional.empty());
   }
 
   /**
@@ -41,7 +40,7 @@ public final class Notes {
    */
   static Notes in(Path path) {
     DurableFile file = new DurableFile(path);
-    Notes notes = new Notes(line -> file.append(List.of(line)));
+    Notes notes = new Notes(Optional.of(file));
     for (String line : file.lines()) {
       notes.apply(Words.of(line));
     }
@@ -104,9 +103,8 @@ public final class Notes {
 
   /** First on disk, then in mind: a note that cannot be written has not been made. */
   private void note(List<?> words) {
-    String line = Words.line(words);
-    keep.accept(line);
-    apply(Words.of(line));
+    file.ifPresent(kept -> kept.append(List.of(Words.line(words))));
+    apply(Words.written(words));
   }
 
   private void apply(Words words) {

@@ -26,10 +26,10 @@ import org.slf4j.LoggerFactory;
  * The adapter of the simulated instrument: the grant protocol over {@link Hardware} and {@link
  * Notes}, both of which outlive it.
  *
- * <p>To restart an adapter in memory, make another one over the same hardware and notes. Preparing,
- * measuring, exposing and winding down happen in the order in which they were asked for; all else
- * at once. Everything happens on the thread of the line of time, under the hardware's lock, so that
- * verbs may be called from any thread.
+ * <p>To restart an adapter in memory, make another one over the same hardware and notes; the old
+ * one ends without warning. Preparing, measuring, exposing and winding down happen in the order in
+ * which they were asked for; all else at once. Everything happens on the thread of the line of
+ * time, under the hardware's lock, so that verbs may be called from any thread.
  */
 public final class SimulatedInstrument implements Instrument {
   private static final Logger LOGGER = LoggerFactory.getLogger(SimulatedInstrument.class);
@@ -411,6 +411,12 @@ public final class SimulatedInstrument implements Instrument {
     @Override
     public void surged() {
       guarded(() -> running().ifPresent(Exposing::watchCurrent));
+    }
+
+    @Override
+    public void replaced() {
+      ended = true;
+      link.cut();
     }
 
     private Optional<Exposing> running() {

@@ -16,6 +16,9 @@ interface Watcher {
 
         @Override
         public void surged() {}
+
+        @Override
+        public void replaced() {}
       };
 
   /** The scan engine came to the scan's end, or to the end of its time. */
@@ -26,4 +29,7 @@ interface Watcher {
 
   /** The monitor sees the current jump. */
   void surged();
+
+  /** Another adapter drives the hardware from now on: this one's process must be gone. */
+  void replaced();
 }

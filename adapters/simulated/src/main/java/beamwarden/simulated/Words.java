@@ -47,6 +47,15 @@ final class Words {
     return new Words(words);
   }
 
+  /** The words that a line of them would have, without writing it. */
+  static Words written(List<?> words) {
+    Deque<String> same = new ArrayDeque<>(words.size());
+    for (Object word : words) {
+      same.add(word.toString());
+    }
+    return new Words(same);
+  }
+
   boolean more() {
     return !left.isEmpty();
   }
