@@ -57,6 +57,7 @@ final class AdapterLink implements Runnable {
   @Override
   public void run() {
     String reason = lived();
+    end(reason);
     forgetPending();
     whenEnded.run();
     if (quiet) {
@@ -121,7 +122,6 @@ final class AdapterLink implements Runnable {
       return Messages.shortened(String.valueOf(e.getMessage()));
     } catch (RuntimeException e) {
       LOGGER.error("the connection failed", e);
-      end("the connection failed");
       return "the connection failed within the daemon: " + e.getMessage();
     } catch (InterruptedException e) {
       Thread.currentThread().interrupt();

@@ -2,68 +2,70 @@ package beamwarden.bridge;
 
 import java.io.IOException;
 import java.nio.channels.FileChannel;
-import java.nio.channels.FileLock;
 import java.nio.channels.OverlappingFileLockException;
 import java.nio.file.Path;
 import java.nio.file.StandardOpenOption;
+import java.util.List;
 import java.util.Optional;
+import java.util.concurrent.CopyOnWriteArrayList;
 
 /**
  * Sees to it that one adapter at most works in a folder: a lock on its file {@code lock}, which the
  * operating system takes back when the process ends, in whatever way.
  */
-final class FolderLock implements AutoCloseable {
+final class FolderLock {
   private static final String FILE = "lock";
   private static final int MOST_TRIES = 20;
   private static final long MILLIS_BETWEEN = 50;
 
-  private final FileChannel channel;
+  /**
+   * Locked files that nothing closes: were a lock given back before the process has ended, its last
+   * deeds would meet those of the next host.
+   */
+  private static final List<FileChannel> KEPT = new CopyOnWriteArrayList<>();
 
-  private FolderLock(FileChannel channel) {
-    this.channel = channel;
-  }
+  private FolderLock() {}
 
-  /** Takes the lock, or empty when another process has it and keeps it for a second. */
-  static Optional<FolderLock> take(Path folder) throws IOException, InterruptedException {
+  /**
+   * Takes the lock until the process ends.
+   *
+   * @return false when another process has it and keeps it for a second
+   */
+  static boolean keep(Path folder) throws IOException, InterruptedException {
     // More than one try, since held() takes the lock for a moment, too.
     for (int tries = 0; tries < MOST_TRIES; tries++) {
-      Optional<FolderLock> lock = takeAtOnce(folder);
-      if (lock.isPresent()) {
-        return lock;
+      Optional<FileChannel> locked = locked(folder);
+      if (locked.isPresent()) {
+        KEPT.add(locked.get());
+        return true;
       }
       Thread.sleep(MILLIS_BETWEEN);
     }
-    return Optional.empty();
+    return false;
   }
 
   /** Whether a process has the lock. Must not be asked by the process that has it. */
   static boolean held(Path folder) throws IOException {
-    Optional<FolderLock> lock = takeAtOnce(folder);
-    if (lock.isPresent()) {
-      lock.get().close();
+    Optional<FileChannel> locked = locked(folder);
+    if (locked.isPresent()) {
+      locked.get().close();
     }
-    return lock.isEmpty();
+    return locked.isEmpty();
   }
 
-  private static Optional<FolderLock> takeAtOnce(Path folder) throws IOException {
+  private static Optional<FileChannel> locked(Path folder) throws IOException {
     FileChannel channel =
         FileChannel.open(folder.resolve(FILE), StandardOpenOption.CREATE, StandardOpenOption.WRITE);
-    boolean taken = false;
+    boolean locked = false;
     try {
-      FileLock lock = channel.tryLock();
-      taken = lock != null;
-      return taken ? Optional.of(new FolderLock(channel)) : Optional.empty();
+      locked = channel.tryLock() != null;
+      return locked ? Optional.of(channel) : Optional.empty();
     } catch (OverlappingFileLockException e) {
       return Optional.empty();
     } finally {
-      if (!taken) {
+      if (!locked) {
         channel.close();
       }
     }
-  }
-
-  @Override
-  public void close() throws IOException {
-    channel.close();
   }
 }

@@ -59,20 +59,15 @@ final class HostRun {
   }
 
   private int locked(HostArguments arguments) throws IOException, InterruptedException {
-    Optional<FolderLock> lock = FolderLock.take(arguments.folder());
-    if (lock.isEmpty()) {
+    if (!FolderLock.keep(arguments.folder())) {
       complaints.println(
           "beamwarden host: another host works in "
               + arguments.folder()
               + "; end that one first, or give this one another folder");
       return WORLD_FAILED;
     }
-    try {
-      hosted(arguments);
-      return FINE;
-    } finally {
-      lock.get().close();
-    }
+    hosted(arguments);
+    return FINE;
   }
 
   private void hosted(HostArguments arguments) throws IOException, InterruptedException {
