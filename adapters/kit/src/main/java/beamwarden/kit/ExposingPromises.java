@@ -30,7 +30,7 @@ final class ExposingPromises {
     Exposure exposure = trial.exposures().shortOne();
     trial.ready(exposure);
     trial.exposed(exposure);
-    trial.pass(trial.beats(10));
+    trial.pass(trial.beats(5));
     trial
         .exposures()
         .spot(8)
@@ -40,7 +40,7 @@ final class ExposingPromises {
               trial.exposed(spot);
             });
     trial.instrument().windDown();
-    trial.pass(trial.beats(10));
+    trial.pass(trial.beats(5));
     trial.evidence().demand(() -> allGranted(trial));
   }
 
@@ -108,10 +108,6 @@ final class ExposingPromises {
     diesAndIsAsked(trial, atOnce);
     trial.prepare(exposure);
     diesAndIsAsked(trial, trial.begun(trial.draft(exposure)));
-    trial.prepare(exposure);
-    Grant halfWay = trial.begun(trial.draft(exposure));
-    trial.passInto(halfWay, 0.5);
-    diesAndIsAsked(trial, halfWay);
   }
 
   private static void diesAndIsAsked(Trial trial, Grant grant) {
@@ -132,7 +128,7 @@ final class ExposingPromises {
     }
     trial.connect();
     trial.seal();
-    List.of(trial.exposures().raster(Exposures.LONG_LINES), trial.exposures().spot(40)).stream()
+    List.of(trial.exposures().raster(5), trial.exposures().spot(20)).stream()
         .flatMap(Optional::stream)
         .forEach(exposure -> cutByItsTime(trial, exposure));
   }
@@ -150,8 +146,7 @@ final class ExposingPromises {
                 InstrumentEvent.class,
                 e ->
                     (e instanceof Begun b && b.grant() == grant.number())
-                        || (e instanceof NotBegun n && n.grant() == grant.number()),
-                trial.beats(40))
+                        || (e instanceof NotBegun n && n.grant() == grant.number()))
             .event();
     if (answer instanceof NotBegun refusal) {
       trial
@@ -174,7 +169,7 @@ final class ExposingPromises {
   }
 
   static void p05(Trial trial) {
-    Exposure exposure = trial.exposures().longOne();
+    Exposure exposure = trial.exposures().ofLines(5);
     if (!trial.verdict().provoked(trial.rig().currentRises(), "too high a current")) {
       return;
     }

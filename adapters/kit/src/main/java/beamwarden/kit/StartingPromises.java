@@ -48,7 +48,7 @@ final class StartingPromises {
 
   /** Nobody can renew this lease: it ends while the connection is lost. */
   private static void alone(Trial trial) {
-    Exposure exposure = trial.exposures().longOne();
+    Exposure exposure = trial.exposures().ofLines(5);
     Duration lease = exposure.scan().duration().multipliedBy(3).dividedBy(4);
     if (!trial.verdict().provoked(trial.rig().connectionBreaks(), "a lost connection")) {
       return;
@@ -60,7 +60,7 @@ final class StartingPromises {
     Draft draft = trial.draft(exposure).lease(lease);
     Instant seen = trial.now();
     Grant grant = trial.begun(draft);
-    trial.await(mark, Lost.class, e -> true, exposure.scan().duration());
+    trial.await(mark, Lost.class, e -> true);
     trial.pass(exposure.scan().duration());
     trial.connect();
     GrantFate fate = trial.fate(grant);
@@ -71,7 +71,7 @@ final class StartingPromises {
   }
 
   static void p08(Trial trial) {
-    Exposure exposure = trial.exposures().longOne();
+    Exposure exposure = trial.exposures().ofLines(5);
     trial.ready(exposure);
     Duration soon = trial.beats(6);
     Draft late = trial.draft(exposure).latestStart(soon);

@@ -105,8 +105,7 @@ final class Trial {
 
   void connect() {
     Connected connected =
-        ask(() -> instrument().connect(recorder), Connected.class, e -> true, rig.patience())
-            .event();
+        ask(() -> instrument().connect(recorder), Connected.class, e -> true).event();
     session = connected.session();
   }
 
@@ -131,8 +130,7 @@ final class Trial {
     return ask(
         () -> instrument().seal(withFence, store, Set.of(asked), handOver),
         InstrumentEvent.class,
-        e -> e instanceof Sealed || e instanceof SealRefused,
-        beats(20));
+        e -> e instanceof Sealed || e instanceof SealRefused);
   }
 
   GrantFate fate(Grant grant) {
@@ -149,8 +147,7 @@ final class Trial {
         InstrumentEvent.class,
         e ->
             (e instanceof Measured m && m.request() == request)
-                || (e instanceof NotMeasured n && n.request() == request),
-        rig.patience());
+                || (e instanceof NotMeasured n && n.request() == request));
     return (Prepared) answer;
   }
 
@@ -161,18 +158,14 @@ final class Trial {
             InstrumentEvent.class,
             e ->
                 (e instanceof Prepared p && p.request() == request)
-                    || (e instanceof NotPrepared n && n.request() == request),
-            rig.patience())
+                    || (e instanceof NotPrepared n && n.request() == request))
         .event();
   }
 
   Heard<HeartbeatSeen> heartbeat() {
     long number = ++heartbeats;
     return ask(
-        () -> instrument().heartbeat(number),
-        HeartbeatSeen.class,
-        e -> e.number() == number,
-        beats(20));
+        () -> instrument().heartbeat(number), HeartbeatSeen.class, e -> e.number() == number);
   }
 
   /** A new grant, counted from a heartbeat of just now. */
@@ -190,17 +183,14 @@ final class Trial {
   }
 
   Heard<Begun> awaitBegun(Grant grant) {
-    return await(0, Begun.class, e -> e.grant() == grant.number(), beats(40));
+    return await(0, Begun.class, e -> e.grant() == grant.number());
   }
 
   /** Waits for the end of what runs; an exposure that nothing ends early has time enough. */
   Heard<Ended> awaitEnded(Grant grant) {
     Duration whole = exposures.lead(grant.exposure()).plus(grant.exposure().scan().duration());
     return await(
-        0,
-        Ended.class,
-        e -> e.receipt().grant() == grant.number(),
-        whole.multipliedBy(2).plus(beats(20)));
+        0, Ended.class, e -> e.receipt().grant() == grant.number(), whole.plus(rig.patience()));
   }
 
   Receipt exposed(Exposure exposure) {
@@ -217,7 +207,8 @@ final class Trial {
   void refuses(Draft draft, String because) {
     Grant grant = draft.grant();
     instrument().begin(grant);
-    rig.time().until(() -> evidence.toldRefused(grant) || evidence.toldBegun(grant), beats(20));
+    rig.time()
+        .until(() -> evidence.toldRefused(grant) || evidence.toldBegun(grant), rig.patience());
     staysRefused(grant, because);
   }
 
@@ -228,14 +219,18 @@ final class Trial {
   }
 
   /** Asks and waits for the answer, which must come. */
-  <E extends InstrumentEvent> Heard<E> ask(
-      Runnable verb, Class<E> kind, Predicate<E> wished, Duration atMost) {
+  <E extends InstrumentEvent> Heard<E> ask(Runnable verb, Class<E> kind, Predicate<E> wished) {
     int mark = recorder.mark();
     verb.run();
-    return await(mark, kind, wished, atMost);
+    return await(mark, kind, wished);
   }
 
-  <E extends InstrumentEvent> Heard<E> await(
+  /** Waits for what must come within the rig's patience. */
+  <E extends InstrumentEvent> Heard<E> await(int mark, Class<E> kind, Predicate<E> wished) {
+    return await(mark, kind, wished, rig.patience());
+  }
+
+  private <E extends InstrumentEvent> Heard<E> await(
       int mark, Class<E> kind, Predicate<E> wished, Duration atMost) {
     Optional<Heard<E>> heard = recorder.await(mark, kind, wished, atMost);
     if (heard.isEmpty()) {
