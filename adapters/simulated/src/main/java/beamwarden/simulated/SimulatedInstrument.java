@@ -281,7 +281,8 @@ public final class SimulatedInstrument implements Instrument {
     death.run();
   }
 
-  private boolean hasEnded() {
+  /** Whether it was closed or its process died; only another one over the same hardware helps. */
+  public boolean hasEnded() {
     synchronized (hardware) {
       return ended;
     }

@@ -15,8 +15,9 @@ import java.util.stream.Stream;
  *   <li>nothing may reach a keep-out area ({@link Ground});
  *   <li>nothing that is not wholly inside a sacrificial area may reach it;
  *   <li>each cap in the order of the sample: on fluence, the highest sum among the places that the
- *       asked passes cover, sacrificial areas left out unless the cap names one; on charge, all of
- *       the sample's, or of the passes whose footprint touches the area.
+ *       asked passes cover, along every pass's own axes, sacrificial areas left out unless the cap
+ *       names one; on charge, all of the sample's, or of the passes whose footprint touches the
+ *       area.
  * </ol>
  *
  * <p>Areas are wider by the placement's uncertainty where they are protected, and narrower by it
@@ -68,7 +69,8 @@ public final class Caps {
       return Optional.of(
           new CapVerdict.Refused(cap, FLUENCE_UNIT, 0, 0, limit, Optional.empty(), because));
     }
-    return view.highest(request.after().passes(), request.asked())
+    List<PassDose> after = request.after().passes();
+    return view.highest(after, view.touched(after, request.asked()))
         .filter(place -> !(place.sum() <= limit))
         .map(place -> refused(request, cap, view, place));
   }

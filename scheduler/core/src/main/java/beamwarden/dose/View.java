@@ -8,6 +8,7 @@ import beamwarden.queue.Area;
 import beamwarden.queue.Averaging;
 import beamwarden.queue.Cap;
 import beamwarden.queue.Sample;
+import java.util.ArrayList;
 import java.util.Collection;
 import java.util.HashSet;
 import java.util.List;
@@ -71,6 +72,32 @@ record View(
       }
     }
     return Optional.ofNullable(highest);
+  }
+
+  /**
+   * The passes in whose places something may have changed when some are asked for: those, and each
+   * one they touch along other axes, where they count as the boxes around them.
+   */
+  List<PassDose> touched(List<PassDose> all, List<PassDose> asked) {
+    Set<Axes> axesAsked = new HashSet<>();
+    asked.forEach(pass -> axesAsked.add(axes(pass)));
+    List<PassDose> touched = new ArrayList<>(asked);
+    for (PassDose pass : all) {
+      Axes axes = axes(pass);
+      boolean elsewhere = axesAsked.size() > 1 || !axesAsked.contains(axes);
+      if (elsewhere && !asked.contains(pass) && touches(pass, asked, axes)) {
+        touched.add(pass);
+      }
+    }
+    return touched;
+  }
+
+  private boolean touches(PassDose pass, List<PassDose> asked, Axes axes) {
+    Box bounds = pass.bounds(worth, averages, placement, axes);
+    return pass.touchesAnything()
+        && asked.stream()
+            .filter(PassDose::touchesAnything)
+            .anyMatch(one -> one.bounds(worth, averages, placement, axes).overlaps(bounds));
   }
 
   private Optional<Place> highest(List<PassDose> all, Box window, Axes axes) {

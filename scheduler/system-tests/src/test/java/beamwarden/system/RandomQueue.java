@@ -57,13 +57,13 @@ final class RandomQueue {
   private Sample sample(int number) {
     Placement placement =
         new Placement(new Point(number * 4e-3 - 6e-3, 1e-3), random.nextInt(4) * 7.5, 2e-6);
-    double room = tight ? random.nextDouble(1, 12) : 100_000;
+    double room = tight ? random.nextDouble(60, 900) : 1e6;
     List<Cap> caps =
         List.of(
             new Cap.OnFluence(
                 new Fluence(room), new Averaging.OverGeneration(), Optional.empty(), ""),
             new Cap.OnFluence(
-                new Fluence(tight ? room / 2 : 100_000),
+                new Fluence(tight ? room / 2 : 1e6),
                 new Averaging.OverGeneration(),
                 Optional.of("kept"),
                 "kept for other work"),

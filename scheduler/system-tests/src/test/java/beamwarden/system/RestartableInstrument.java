@@ -6,17 +6,18 @@ import beamwarden.instrument.Grant;
 import beamwarden.instrument.Instrument;
 import beamwarden.instrument.InstrumentListener;
 import beamwarden.instrument.StopWhen;
+import beamwarden.simulated.SimulatedInstrument;
 import java.util.Set;
 import java.util.function.Supplier;
 
 /**
- * An instrument whose adapter is started anew at each connecting, as a supervisor would: the same
+ * An instrument whose adapter is started anew when it has died, as a supervisor would: the same
  * hardware, the same notes. Each verb can be the last one a daemon ever calls.
  */
 final class RestartableInstrument implements Instrument {
-  private final Supplier<Instrument> adapters;
+  private final Supplier<SimulatedInstrument> adapters;
   private final Runnable beforeVerb;
-  private Instrument adapter;
+  private SimulatedInstrument adapter;
 
   /**
    * Such an instrument.
@@ -24,7 +25,7 @@ final class RestartableInstrument implements Instrument {
    * @param adapters makes an adapter over the same hardware and notes
    * @param beforeVerb runs before each verb, and may throw to kill the daemon there
    */
-  RestartableInstrument(Supplier<Instrument> adapters, Runnable beforeVerb) {
+  RestartableInstrument(Supplier<SimulatedInstrument> adapters, Runnable beforeVerb) {
     this.adapters = adapters;
     this.beforeVerb = beforeVerb;
     this.adapter = adapters.get();
@@ -33,7 +34,9 @@ final class RestartableInstrument implements Instrument {
   @Override
   public void connect(InstrumentListener listener) {
     beforeVerb.run();
-    adapter = adapters.get();
+    if (adapter.hasEnded()) {
+      adapter = adapters.get();
+    }
     adapter.connect(listener);
   }
 
