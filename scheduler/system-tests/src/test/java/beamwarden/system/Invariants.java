@@ -81,12 +81,12 @@ final class Invariants {
     for (Beam beam : newBeams) {
       noExposureWithoutAnEarlierGrant(beam);
       noExposureOutsideAShift(beam);
-      beams.add(beam);
       if (beam.amperes() > opened.get(beam.grant()).inFull().upperCurrent().amperes()) {
         guaranteesLeft.add(beam.sample());
       }
       electronsByGrant.merge(beam.grant(), beam.electrons(), Double::sum);
       follow(beam);
+      beams.add(beam);
     }
     if (booksChanged || !newBeams.isEmpty()) {
       nothingIsDoneTwiceWithoutBeingBookedTwice();
@@ -166,7 +166,6 @@ final class Invariants {
       Place place = new Place(outline.at(dx, dy), outline.turnDegrees());
       beams.stream()
           .filter(other -> other.sample().equals(beam.sample()))
-          .filter(other -> other != beam)
           .forEach(other -> add(place, other));
       ofSample.add(place);
     }
