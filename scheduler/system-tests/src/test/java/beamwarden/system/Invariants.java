@@ -73,10 +73,11 @@ final class Invariants {
 
   /** Takes in what is new, then checks everything that it may have broken. */
   void check(List<Recorded> recorded, Books books, List<Beam> newBeams) {
+    Set<String> touched = new HashSet<>();
     for (Recorded one : recorded.subList(entriesSeen, recorded.size())) {
       take(one);
+      touched.add(one.entry().chain());
     }
-    boolean booksChanged = recorded.size() > entriesSeen;
     entriesSeen = recorded.size();
     for (Beam beam : newBeams) {
       noExposureWithoutAnEarlierGrant(beam);
@@ -86,12 +87,13 @@ final class Invariants {
       }
       electronsByGrant.merge(beam.grant(), beam.electrons(), Double::sum);
       follow(beam);
+      touched.add(beam.sample());
       beams.add(beam);
     }
-    if (booksChanged || !newBeams.isEmpty()) {
+    if (!touched.isEmpty()) {
       nothingIsDoneTwiceWithoutBeingBookedTwice();
-      upperIsNeverBelowDelivered(books);
-      upperIsNeverAboveACap(books);
+      upperIsNeverBelowDelivered(books, touched);
+      upperIsNeverAboveACap(books, touched);
       noJobIsLost(books);
     }
   }
@@ -189,8 +191,9 @@ final class Invariants {
     return range / (2 * Math.sqrt(2 * Math.log(2)));
   }
 
-  private void upperIsNeverBelowDelivered(Books books) {
-    for (SampleRecord record : withGuaranteesKept(books)) {
+  /** Only what was touched can have changed. */
+  private void upperIsNeverBelowDelivered(Books books, Set<String> touched) {
+    for (SampleRecord record : withGuaranteesKept(books, touched)) {
       for (Place place : places.getOrDefault(record.sample().id(), List.of())) {
         atMostUpper(record, place);
       }
@@ -218,8 +221,8 @@ final class Invariants {
         .electronsPerSquareNanometre();
   }
 
-  private void upperIsNeverAboveACap(Books books) {
-    for (SampleRecord record : withGuaranteesKept(books)) {
+  private void upperIsNeverAboveACap(Books books, Set<String> touched) {
+    for (SampleRecord record : withGuaranteesKept(books, touched)) {
       for (Standing standing : Caps.standing(record.sample(), record.dose())) {
         require(
             standing.upper() <= standing.limit(),
@@ -229,8 +232,9 @@ final class Invariants {
   }
 
   /** The promise holds while the instrument keeps its guarantees: samples on which it did. */
-  private List<SampleRecord> withGuaranteesKept(Books books) {
+  private List<SampleRecord> withGuaranteesKept(Books books, Set<String> among) {
     return books.samples().stream()
+        .filter(record -> among.contains(record.sample().id()))
         .filter(record -> !guaranteesLeft.contains(record.sample().id()))
         .toList();
   }
@@ -243,7 +247,7 @@ final class Invariants {
 
   /** At the end of a night: the whole plane of every sample, raster by raster, and every job. */
   void checkAtTheEnd(Books books) {
-    for (SampleRecord record : withGuaranteesKept(books)) {
+    for (SampleRecord record : withGuaranteesKept(books, places.keySet())) {
       List<Beam> ofSample =
           beams.stream().filter(beam -> beam.sample().equals(record.sample().id())).toList();
       if (!ofSample.isEmpty()) {
