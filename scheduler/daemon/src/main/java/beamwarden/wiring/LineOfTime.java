@@ -28,14 +28,14 @@ final class LineOfTime {
    * @param pace the wished pace, if one was given
    * @param from the wished beginning, if one was given
    */
-  static TimeAnchor of(StoreFolder folder, OptionalDouble pace, Optional<Instant> from) {
+  static TimeAnchor of(ServeFolder folder, OptionalDouble pace, Optional<Instant> from) {
     Path file = folder.lineOfTime();
     if (Files.exists(file)) {
       return known(read(file), folder, pace, from);
     }
     TimeAnchor chosen = choose(pace, from);
     try {
-      StoreFolder.writePrivately(file, JSON.writeValueAsString(chosen) + "\n");
+      ServeFolder.writePrivately(file, JSON.writeValueAsString(chosen) + "\n");
     } catch (IOException failure) {
       throw new WiringException(file + " cannot be written: " + failure.getMessage());
     }
@@ -60,7 +60,7 @@ final class LineOfTime {
   }
 
   private static TimeAnchor known(
-      TimeAnchor kept, StoreFolder folder, OptionalDouble pace, Optional<Instant> from) {
+      TimeAnchor kept, ServeFolder folder, OptionalDouble pace, Optional<Instant> from) {
     if (pace.isPresent() && pace.getAsDouble() != kept.pace()) {
       throw new WiringException(
           "the store "

@@ -13,7 +13,7 @@ import java.util.HexFormat;
  *
  * @param root the folder
  */
-record StoreFolder(Path root) {
+record ServeFolder(Path root) {
   private static final int TOKEN_BYTES = 32;
 
   /** The file into which the daemon writes its address once it answers. */

@@ -1,0 +1,155 @@
+package beamwarden.wiring;
+
+import beamwarden.bridge.BridgeInstrument;
+import beamwarden.bridge.HostProcess;
+import beamwarden.clockwork.Alarm;
+import beamwarden.clockwork.ClockListener;
+import beamwarden.clockwork.QuartzClock;
+import beamwarden.clockwork.WallClock;
+import beamwarden.instrument.Instrument;
+import beamwarden.plan.PriorityPlanner;
+import beamwarden.profile.Profile;
+import beamwarden.run.Desk;
+import beamwarden.run.Event;
+import beamwarden.run.RunSettings;
+import beamwarden.run.RunSetup;
+import beamwarden.run.Wake;
+import beamwarden.shift.ShiftCalendar;
+import beamwarden.store.SqliteJournal;
+import beamwarden.timing.PacedTime;
+import beamwarden.timing.TimeAnchor;
+import java.nio.file.Path;
+import java.time.Duration;
+import java.time.Instant;
+import java.time.InstantSource;
+import java.util.HashMap;
+import java.util.List;
+import java.util.Map;
+import java.util.Optional;
+import java.util.OptionalDouble;
+import java.util.OptionalLong;
+import java.util.concurrent.atomic.AtomicReference;
+import org.slf4j.Logger;
+import org.slf4j.LoggerFactory;
+
+/**
+ * One instrument's daemon, put together: store, line of time, instrument, engine, clock.
+ *
+ * <p>Starts in this order: lock the store, read and verify the books, open the line of time, start
+ * or find the instrument's process, take the fence, let the engine make its first step. Stops in
+ * the reverse order; the instrument is blanked and let go first, so that nothing new begins.
+ */
+public final class NightDaemon implements AutoCloseable {
+  private static final Logger LOGGER = LoggerFactory.getLogger(NightDaemon.class);
+
+  private final SqliteJournal journal;
+  private final PacedTime line;
+  private final Instrument instrument;
+  private final EngineThread engine;
+  private final QuartzClock clock;
+
+  /**
+   * What a daemon is started with.
+   *
+   * @param profile the instrument profile
+   * @param store the store's folder
+   * @param pace how many times faster than real time, if a new store is to be paced
+   * @param from when a new store's line of time begins, if not now
+   * @param seed the seed of a simulated instrument, if not its own
+   */
+  public record Start(
+      Profile profile,
+      Path store,
+      OptionalDouble pace,
+      Optional<Instant> from,
+      OptionalLong seed) {}
+
+  /** Starts a daemon. */
+  public static NightDaemon start(Start start) {
+    ServeFolder folder = new ServeFolder(start.store());
+    folder.make();
+    SqliteJournal journal = SqliteJournal.open(start.store());
+    try {
+      TimeAnchor anchor = LineOfTime.of(folder, start.pace(), start.from());
+      return new NightDaemon(start, folder, journal, anchor);
+    } catch (RuntimeException failure) {
+      journal.close();
+      throw failure;
+    }
+  }
+
+  private NightDaemon(Start start, ServeFolder folder, SqliteJournal journal, TimeAnchor anchor) {
+    this.journal = journal;
+    this.line = new PacedTime(anchor, "line-of-time");
+    this.instrument = instrument(start, folder, anchor);
+    AtomicReference<QuartzClock> armed = new AtomicReference<>();
+    this.engine =
+        new EngineThread(
+            setup(start.profile(), anchor.pace(), journal.store()),
+            start.profile().abilities().instrument(),
+            journal,
+            instrument,
+            line,
+            wakes -> arm(armed.get(), wakes),
+            reason -> LOGGER.error("nothing runs any more until a person has looked: {}", reason));
+    this.clock =
+        new QuartzClock(
+            line, anchor, new WallClock(InstantSource.system(), line::wallStep), new Waking());
+    armed.set(clock);
+    engine.enqueue(new Event.Woken());
+  }
+
+  private static void arm(QuartzClock clock, List<Wake> wakes) {
+    if (clock != null) {
+      clock.wakeAt(wakes.stream().map(wake -> new Alarm(wake.reason().name(), wake.at())).toList());
+    }
+  }
+
+  private static Instrument instrument(Start start, ServeFolder folder, TimeAnchor anchor) {
+    Profile profile = start.profile();
+    Map<String, String> options = new HashMap<>(profile.options());
+    start.seed().ifPresent(seed -> options.put("seed", Long.toString(seed)));
+    Path own = folder.adapter(profile.adapter(), profile.abilities().instrument());
+    return new BridgeInstrument(
+        HostProcess.ofAdapter(profile.adapter(), own, profile.abilities(), options, anchor));
+  }
+
+  /** What a run under a profile is set up with. */
+  static RunSetup setup(Profile profile, double pace, String store) {
+    ShiftCalendar calendar =
+        new ShiftCalendar(profile.zone(), profile.shifts(), profile.windDown());
+    return new RunSetup(profile, calendar, RunSettings.atPace(pace), new PriorityPlanner(), store);
+  }
+
+  /** Where people turn to this run. */
+  public Desk desk() {
+    return engine;
+  }
+
+  /** Hands what the clock notices over to the engine. */
+  private final class Waking implements ClockListener {
+    @Override
+    public void due(Alarm alarm) {
+      engine.enqueue(new Event.Woken());
+    }
+
+    @Override
+    public void wallStepped(Duration step) {
+      engine.enqueue(new Event.Woken());
+    }
+
+    @Override
+    public void stalled(Alarm alarm, Duration since) {
+      LOGGER.error("the engine has not answered to {} for {}", alarm.reason(), since);
+    }
+  }
+
+  @Override
+  public void close() {
+    clock.close();
+    instrument.close();
+    engine.close();
+    line.close();
+    journal.close();
+  }
+}
