@@ -8,6 +8,7 @@ import java.util.List;
 /** What is held against an adapter, and what could not be tried. */
 final class Verdict {
   private static final int TOLD_EVENTS = 8;
+  private static final int MOST_OF_AN_EVENT = 300;
 
   private final Promise promise;
   private final Recorder recorder;
@@ -42,8 +43,13 @@ final class Verdict {
     StringBuilder told = new StringBuilder(promise + ": " + what + ". Last heard:");
     heard
         .subList(Math.max(0, heard.size() - TOLD_EVENTS), heard.size())
-        .forEach(one -> told.append("\n  ").append(one.at()).append(' ').append(one.event()));
+        .forEach(one -> told.append("\n  ").append(one.at()).append(' ').append(text(one)));
     return new AssertionError(told.toString());
+  }
+
+  private static String text(Heard<?> one) {
+    String text = one.event().toString();
+    return text.length() <= MOST_OF_AN_EVENT ? text : text.substring(0, MOST_OF_AN_EVENT) + "...";
   }
 
   /** Makes a fault; false when this rig cannot, which is then reported. */

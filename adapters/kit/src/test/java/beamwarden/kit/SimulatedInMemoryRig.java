@@ -3,6 +3,7 @@ package beamwarden.kit;
 import beamwarden.beam.BeamSettings;
 import beamwarden.beam.Placement;
 import beamwarden.instrument.Abilities;
+import beamwarden.instrument.Blanker;
 import beamwarden.instrument.Instrument;
 import beamwarden.simulated.DeliveredRecord;
 import beamwarden.simulated.FaultPlan;
@@ -21,21 +22,21 @@ import java.util.Optional;
 
 /** The simulated instrument in this process, on virtual time. */
 final class SimulatedInMemoryRig implements Rig {
-  private static final long SEED = 7;
   private static final double EARLY = 0.1;
 
   private final VirtualTime line = new VirtualTime(Instant.parse("2031-03-12T19:00:00Z"));
   private final MemoryRecord record = DeliveredRecord.inMemory();
   private final Notes notes = Notes.inMemory();
-  private final Abilities abilities = SimulatedLab.abilities();
+  private final Abilities abilities;
   private final Path folder;
   private final Hardware hardware;
   private Optional<Mishap> inNextExposure = Optional.empty();
   private SimulatedInstrument instrument;
 
-  SimulatedInMemoryRig(Path folder) {
+  SimulatedInMemoryRig(Blanker.Kind blanker, long seed, Path folder) {
+    this.abilities = SimulatedLab.abilities(blanker);
     this.folder = folder;
-    Simulation simulation = new Simulation(SEED, true, true, false, this::strike);
+    Simulation simulation = new Simulation(seed, true, true, false, this::strike);
     this.hardware = Hardware.inMemory(abilities, simulation, line, record);
     this.instrument = new SimulatedInstrument(hardware, notes, folder);
   }

@@ -1,5 +1,6 @@
 package beamwarden.kit;
 
+import beamwarden.instrument.Blanker;
 import java.nio.file.Path;
 import org.junit.jupiter.api.io.TempDir;
 
@@ -9,7 +10,7 @@ class SimulatedInstrumentTest extends AdapterPromises {
 
   @Override
   protected Rig rig() {
-    return new SimulatedInMemoryRig(folder);
+    return new SimulatedInMemoryRig(Blanker.Kind.FAST, 7, folder);
   }
 
   @Override

@@ -29,7 +29,7 @@ final class SimulatedLab {
 
   private SimulatedLab() {}
 
-  static Abilities abilities() {
+  static Abilities abilities(Blanker.Kind blanker) {
     return new Abilities(
         "south-room",
         new Stage(-25e-3, 25e-3, -25e-3, 25e-3, 1e-3, 10e-3, Duration.ofMillis(200), 2e-6),
@@ -43,7 +43,7 @@ final class SimulatedLab {
             Duration.ofSeconds(1)),
         new CurrentMeter(
             0.03, new Current(0.2e-12), 0.1, Duration.ofHours(1), Duration.ofMillis(500)),
-        new Blanker(Blanker.Kind.FAST, Optional.of(Duration.ofNanos(100_000))),
+        new Blanker(blanker, Optional.of(Duration.ofNanos(100_000))),
         Map.of(),
         Duration.ZERO,
         Map.of(

@@ -5,6 +5,7 @@ import beamwarden.beam.Placement;
 import beamwarden.bridge.BridgeInstrument;
 import beamwarden.bridge.HostProcess;
 import beamwarden.instrument.Abilities;
+import beamwarden.instrument.Blanker;
 import beamwarden.instrument.Instrument;
 import beamwarden.instrument.InstrumentEvent;
 import beamwarden.simulated.Mishap;
@@ -33,7 +34,7 @@ final class SimulatedProcessRig implements Rig {
 
   private static final long EXIT_SECONDS = 10;
 
-  private final Abilities abilities = SimulatedLab.abilities();
+  private final Abilities abilities = SimulatedLab.abilities(Blanker.Kind.FAST);
   private final Path folder;
   private final TimeAnchor anchor;
   private final PacedTime line;
