@@ -28,9 +28,6 @@ import org.slf4j.LoggerFactory;
 final class Exposing implements Order {
   private static final Logger LOGGER = LoggerFactory.getLogger(Exposing.class);
 
-  private static final int PROGRESS_EVENTS = 10;
-  private static final Duration PROGRESS_EVERY = Duration.ofSeconds(1);
-  private static final int LOOKS_AT_THE_CURRENT = 16;
   private static final double WELL_ABOVE = 1.2;
   private static final Outcome NOTHING =
       new Outcome(new BeamPath.Reach(0, 0, 0), new Current(0), new Current(0));
@@ -39,6 +36,7 @@ final class Exposing implements Order {
   private final Grant grant;
   private final GrantRules rules;
   private final Hardware hardware;
+  private final Lookout lookout;
   private Runnable done = () -> {};
   private boolean running;
   private Instant firstElectron = Instant.MAX;
@@ -48,6 +46,7 @@ final class Exposing implements Order {
     this.grant = grant;
     this.rules = rules;
     this.hardware = desk.hardware();
+    this.lookout = new Lookout(this, desk);
   }
 
   Grant grant() {
@@ -59,11 +58,6 @@ final class Exposing implements Order {
     return running;
   }
 
-  /** Forbids it: it has not started, and never will. */
-  void refuse(Fault fault) {
-    desk.refuse(grant.number(), fault);
-  }
-
   @Override
   public void start(Runnable whenDone) {
     done = whenDone;
@@ -73,7 +67,7 @@ final class Exposing implements Order {
     }
     Optional<Fault> refusal = rules.refuses(grant);
     if (refusal.isPresent()) {
-      refuse(refusal.get());
+      desk.refuse(grant.number(), refusal.get());
       done.run();
       return;
     }
@@ -103,18 +97,21 @@ final class Exposing implements Order {
             limitNanos(),
             firstElectron));
     running = true;
-    watchLease();
-    watchCurrent();
-    tellProgress();
+    lookout.start();
     plan(desk.strike(FaultPlan.Step.MID_EXPOSURE));
   }
 
   /** A scan that fits ends by itself; any other is cut so that the blanking still fits. */
   private long limitNanos() {
-    Duration most = grant.longestBeamOn();
-    Duration needed = grant.exposure().scan().beamOn();
-    boolean fits = blanker().kind() == Blanker.Kind.FAST && needed.compareTo(most) <= 0;
-    return fits ? most.toNanos() : most.minus(reaction()).toNanos();
+    boolean fast = blanker().kind() == Blanker.Kind.FAST;
+    BeamPath whole = new BeamPath(grant.exposure().scan(), fast, Long.MAX_VALUE);
+    long most = grant.longestBeamOn().toNanos();
+    return whole.beamOnNanos(Long.MAX_VALUE) <= most ? most : most - reaction().toNanos();
+  }
+
+  /** Looks at the current anew: it has jumped. */
+  void watchCurrent() {
+    lookout.watchCurrent();
   }
 
   /** Ends it as asked. */
@@ -125,10 +122,7 @@ final class Exposing implements Order {
       return;
     }
     long boundary =
-        hardware
-            .path()
-            .orElseThrow()
-            .boundaryFrom(nanosSinceFirst(now), ability().stopsAt(), ability().longestDwell());
+        path().boundaryFrom(nanosSinceFirst(now), ability().stopsAt(), ability().longestDwell());
     endAt(firstElectron.plusNanos(boundary), Optional.empty());
   }
 
@@ -151,81 +145,13 @@ final class Exposing implements Order {
     finish(cut, Optional.of(fault));
   }
 
-  private void endAt(Instant off, Optional<Fault> fault) {
+  /** Ends it at a moment to come, unless it has ended by then. */
+  void endAt(Instant off, Optional<Fault> fault) {
     desk.later(
         Duration.between(hardware.time().instant(), off),
         () -> {
           if (running) {
             hardware.cutAt(off).ifPresent(outcome -> finish(outcome, fault));
-          }
-        });
-  }
-
-  /** The lease counts from the last heartbeat; a newer one only moves the next look. */
-  private void watchLease() {
-    long over = desk.heartbeats().last().orElseThrow() + grant.lease().toNanos();
-    Duration left = Duration.ofNanos(over - hardware.time().elapsedNanos());
-    Instant due = hardware.time().instant().plus(left);
-    desk.later(left, () -> lookAtLease(over, due));
-  }
-
-  private void lookAtLease(long over, Instant due) {
-    if (!running) {
-      return;
-    }
-    if (desk.heartbeats().last().orElseThrow() + grant.lease().toNanos() > over) {
-      watchLease();
-      return;
-    }
-    endAt(
-        due.plus(blankingTakes()),
-        Optional.of(new Fault(FaultKind.LEASE_ENDED, "no heartbeat came within " + grant.lease())));
-  }
-
-  /** Ends the exposure when the monitor shows too much: now, or wherever the drift leads to. */
-  void watchCurrent() {
-    Instant now = hardware.time().instant();
-    Instant from = now.isAfter(firstElectron) ? now : firstElectron;
-    long left = Math.max(0, endNanos() - nanosSinceFirst(from));
-    for (int look = 0; look <= LOOKS_AT_THE_CURRENT; look++) {
-      Instant at = from.plusNanos(left / LOOKS_AT_THE_CURRENT * look);
-      Current shown = hardware.monitored(grant.number(), at);
-      if (shown.compareTo(grant.highestCurrent()) > 0) {
-        endAt(at.plus(reaction()), Optional.of(tooMuch(shown)));
-        return;
-      }
-    }
-  }
-
-  private Fault tooMuch(Current shown) {
-    return new Fault(
-        FaultKind.CURRENT_OUT_OF_BOUNDS,
-        "the current of %s is above the %s that grant %d allows"
-            .formatted(shown, grant.highestCurrent(), grant.number()));
-  }
-
-  private void tellProgress() {
-    Duration whole = Duration.ofNanos(endNanos());
-    Duration share = whole.dividedBy(PROGRESS_EVENTS);
-    Duration every = share.compareTo(PROGRESS_EVERY) > 0 ? share : PROGRESS_EVERY;
-    if (whole.compareTo(every) > 0) {
-      tellProgressAfter(ability().frameStart().plus(every), every);
-    }
-  }
-
-  private void tellProgressAfter(Duration wait, Duration every) {
-    desk.later(
-        wait,
-        () -> {
-          if (running) {
-            long units =
-                hardware
-                    .path()
-                    .orElseThrow()
-                    .at(nanosSinceFirst(hardware.time().instant()))
-                    .unitsDone();
-            desk.say(new InstrumentEvent.Progress(grant.number(), units));
-            tellProgressAfter(every, every);
           }
         });
   }
@@ -237,7 +163,7 @@ final class Exposing implements Order {
             desk.later(
                 Duration.between(
                     hardware.time().instant(),
-                    firstElectron.plusNanos((long) (endNanos() * struck.share()))),
+                    firstElectron.plusNanos((long) (path().endNanos() * struck.share()))),
                 () -> strikeNow(struck.mishap())));
   }
 
@@ -298,15 +224,21 @@ final class Exposing implements Order {
         fault);
   }
 
-  private long endNanos() {
-    return hardware.path().orElseThrow().endNanos();
+  /** The path of the beam; it runs. */
+  BeamPath path() {
+    return hardware.path().orElseThrow();
   }
 
-  private long nanosSinceFirst(Instant at) {
+  /** When the first electron comes. */
+  Instant firstElectron() {
+    return firstElectron;
+  }
+
+  long nanosSinceFirst(Instant at) {
     return Duration.between(firstElectron, at).toNanos();
   }
 
-  private ModeAbility ability() {
+  ModeAbility ability() {
     return hardware.abilities().modes().get(grant.exposure().conditions().mode());
   }
 
@@ -315,11 +247,11 @@ final class Exposing implements Order {
   }
 
   /** The longest time from a cause to a blanked beam. */
-  private Duration reaction() {
+  Duration reaction() {
     return blanker().alone().orElse(Duration.ZERO);
   }
 
-  private Duration blankingTakes() {
+  Duration blankingTakes() {
     return hardware.blankingTakes(grant.number());
   }
 }

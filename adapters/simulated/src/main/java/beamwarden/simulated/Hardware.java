@@ -11,8 +11,6 @@ import beamwarden.quantity.Current;
 import beamwarden.timing.Timeline;
 import java.time.Duration;
 import java.time.Instant;
-import java.util.ArrayList;
-import java.util.List;
 import java.util.Optional;
 import java.util.function.Consumer;
 
@@ -26,7 +24,6 @@ import java.util.function.Consumer;
 public final class Hardware {
   private static final Duration DOOR_STAYS_OPEN = Duration.ofMinutes(10);
   private static final Duration PUT_RIGHT_AFTER = Duration.ofHours(1);
-  private static final Duration LONGEST_STRETCH = Duration.ofMinutes(10);
 
   private final Abilities abilities;
   private final Simulation simulation;
@@ -247,69 +244,29 @@ public final class Hardware {
     scanEnd.cancel();
     BeamPath path = path(run);
     long off = Math.max(0, Math.min(offNanos, path.endNanos()));
-    Outcome outcome = outcome(run, path, off);
-    if (outcome.reach().beamOnNanos() > 0) {
-      record.append(truth(run, path, off));
+    Account account =
+        new Account(
+            path,
+            current().orElseThrow(),
+            seconds(run.firstElectron()),
+            Duration.between(run.firstElectron(), state.surgeFrom).toNanos(),
+            off);
+    if (path.at(off).beamOnNanos() > 0) {
+      record.append(account.stretches(truly(run, path)));
     }
     state.run = Optional.empty();
     save();
-    return outcome;
+    return account.outcome(imperfection.monitorError(run.grant()));
   }
 
-  private List<Stretch> truth(Run run, BeamPath path, long off) {
-    TrueScan scan =
-        new TrueScan(
-            run,
-            path,
-            imperfection.stageError(state.moves),
-            imperfection.gain("x"),
-            imperfection.gain("y"),
-            imperfection.probeMetres(state.conditions.orElseThrow().beam()));
-    List<Stretch> stretches = new ArrayList<>();
-    List<Long> cuts = cuts(run, off);
-    for (int part = 1; part < cuts.size(); part++) {
-      long from = cuts.get(part - 1);
-      long to = cuts.get(part);
-      stretches.addAll(scan.stretches(from, to, mean(run, from, to)));
-    }
-    return stretches;
-  }
-
-  private Outcome outcome(Run run, BeamPath path, long off) {
-    TrueCurrent truth = current().orElseThrow();
-    double lowest = Double.POSITIVE_INFINITY;
-    double highest = 0;
-    List<Long> cuts = cuts(run, off);
-    for (int part = 1; part < cuts.size(); part++) {
-      double mean = mean(run, cuts.get(part - 1), cuts.get(part));
-      double moves = truth.moves((cuts.get(part) - cuts.get(part - 1)) * 1e-9);
-      lowest = Math.min(lowest, mean - moves);
-      highest = Math.max(highest, mean + moves);
-    }
-    double error = imperfection.monitorError(run.grant());
-    return new Outcome(
-        path.at(off),
-        new Current(Math.min(lowest, highest) * (1 - error)),
-        new Current(highest * (1 + error)));
-  }
-
-  /** Moments between which the current is near enough to its mean: ten minutes, and a surge. */
-  private List<Long> cuts(Run run, long off) {
-    List<Long> cuts = new ArrayList<>(List.of(0L));
-    long surge = Duration.between(run.firstElectron(), state.surgeFrom).toNanos();
-    long next = 0;
-    while (next < off) {
-      long longest = simulation.noise() ? next + LONGEST_STRETCH.toNanos() : off;
-      long upTo = Math.min(off, longest);
-      next = surge > next && surge < upTo ? surge : upTo;
-      cuts.add(next);
-    }
-    return cuts;
-  }
-
-  private double mean(Run run, long fromNanos, long toNanos) {
-    double first = seconds(run.firstElectron());
-    return current().orElseThrow().mean(first + fromNanos * 1e-9, first + toNanos * 1e-9);
+  private TrueScan truly(Run run, BeamPath path) {
+    return new TrueScan(
+        run,
+        path,
+        imperfection.stageError(state.moves),
+        imperfection.gain("x"),
+        imperfection.gain("y"),
+        imperfection.probeMetres(state.conditions.orElseThrow().beam()));
   }
 
   private Optional<TrueCurrent> current() {

@@ -49,6 +49,11 @@ final class TrueCurrent {
     this.surge = surge;
   }
 
+  /** Whether it moves at all. */
+  boolean wanders() {
+    return swing > 0;
+  }
+
   /** The current at a moment. */
   double amperes(double seconds) {
     return calm(seconds) * factor(seconds);

@@ -38,6 +38,7 @@ class RandomNightTest {
     Set<Long> sent = new HashSet<>();
     Map<Long, GrantFate> fates = new HashMap<>();
     for (long number = 1; number <= GRANTS; number++) {
+      session.heard.clear();
       begin(session, number, random);
       sent.add(number);
       if (random.nextInt(5) == 0) {
