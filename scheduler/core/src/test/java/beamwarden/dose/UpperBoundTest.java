@@ -285,12 +285,14 @@ class UpperBoundTest {
         double sigma = GaussianSpot.sigma(Math.hypot(10e-9, 1.268e-6 * 0.9947));
         return scan instanceof RasterScan raster
             ? place -> onRaster(raster, touched, flowed, place, sigma)
-            : place ->
-                new GaussianSpot(sigma).highest(flowed.electronsIn(beamOn))
-                    * new GaussianSpot(sigma)
-                        .falloff(
-                            place.distanceMetres(
-                                ((SpotScan) scan).at().plus(shift.xMetres(), shift.yMetres())));
+            : place -> onSpot((SpotScan) scan, flowed.electronsIn(beamOn), place, sigma);
+      }
+
+      /** What lies beyond 8 sigma is left out of the books, and they say so. */
+      private double onSpot(SpotScan scan, double electrons, Point place, double sigma) {
+        double distance = place.distanceMetres(scan.at().plus(shift.xMetres(), shift.yMetres()));
+        GaussianSpot spot = new GaussianSpot(sigma);
+        return distance > 8 * sigma ? 0 : spot.highest(electrons) * spot.falloff(distance);
       }
 
       private double onRaster(
