@@ -2,12 +2,13 @@ package beamwarden.document;
 
 import beamwarden.beam.Conditions;
 import beamwarden.beam.Mode;
-import beamwarden.document.Values.Sign;
+import beamwarden.document.Quantities.Sign;
 import beamwarden.instrument.ModeAbility;
 import beamwarden.profile.Profile;
 import beamwarden.queue.Acquisition;
 import java.time.Duration;
 import java.util.ArrayList;
+import java.util.EnumMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
@@ -17,38 +18,56 @@ import java.util.TreeMap;
 
 /** Reads how a job looks: its mode, and what that mode needs. */
 final class AcquisitionReader {
-  /** The modes that this version runs, each with the keys that have a meaning for it alone. */
-  private static final Map<Mode, Set<String>> RUN =
+  /** Keys of jobs that this version knows and does not run, each with what to write instead. */
+  static final Map<String, String> NOT_RUN =
       new TreeMap<>(
+          Map.of(
+              "integration", "write a job of a mode that is run",
+              "analyser", "leave it out; every pass is made without an analyser",
+              "grating", "leave it out; a map through filters needs none",
+              "slit", "leave it out; a map through filters needs none",
+              "repetition", "leave it out; the beam is not pulsed",
+              "registration", "leave it out; the uncertainty of the placement covers drift",
+              "prior-dose", "leave it out, and set a cap that leaves no room for more"));
+
+  /** Keys that have a meaning for some modes only. */
+  private static final Set<String> OF_SOME_MODES =
+      Set.of("dwell", "pixels", "frames", "filters", "also", "until");
+
+  /** The modes that this version runs, each with those keys that have a meaning for it. */
+  private static final Map<Mode, Set<String>> RUN =
+      new EnumMap<>(
           Map.of(
               Mode.ELECTRON_IMAGE, Set.of("dwell", "pixels", "frames"),
               Mode.INTENSITY_MAP, Set.of("dwell", "pixels", "frames", "filters", "also"),
               Mode.PHOTON_CORRELATION, Set.of("until")));
 
-  private static final List<String> OF_SOME_MODES =
-      List.of("dwell", "pixels", "frames", "filters", "also", "until");
   private static final Keys UNTIL = Keys.of("until", "coincidences", "at-most");
   private static final String UNTIL_EXAMPLE = "{ coincidences: 20000, at-most: PT3H }";
+  private static final String PIXELS_EXAMPLE = "[512, 512]";
+  private static final String FILTERS_EXAMPLE = "[panchromatic]";
 
   private final Profile profile;
   private final Values values;
+  private final Quantities quantities;
   private final Problems problems;
 
   AcquisitionReader(Profile profile, Values values, Problems problems) {
     this.profile = profile;
     this.values = values;
     this.problems = problems;
+    this.quantities = new Quantities(values, problems);
   }
 
+  /** The names of the modes that this version runs. */
   static List<String> runModes() {
     return RUN.keySet().stream().map(Mode::text).toList();
   }
 
   /** The job's mode, when this version runs it and the instrument has it. */
   Optional<Mode> mode(Fields fields) {
-    return fields
-        .need("mode", Mode.INTENSITY_MAP.text())
-        .flatMap(node -> mode(node).filter(mode -> runs(node, mode)));
+    return fields.need(
+        "mode", Mode.INTENSITY_MAP.text(), node -> mode(node).filter(mode -> runs(node, mode)));
   }
 
   private Optional<Mode> mode(Node node) {
@@ -60,205 +79,137 @@ final class AcquisitionReader {
   }
 
   private boolean runs(Node node, Mode mode) {
-    if (!RUN.containsKey(mode)) {
+    boolean run = RUN.containsKey(mode);
+    boolean offered = profile.abilities().modes().containsKey(mode);
+    if (!run) {
       problems.error(
           node,
           Keys.notRunMessage("a job of mode " + mode.text()),
           "leave the job out, or write " + Printed.anyOf(runModes()));
-      return false;
-    }
-    if (!profile.abilities().modes().containsKey(mode)) {
+    } else if (!offered) {
       problems.error(
           node,
-          profile.abilities().instrument() + " has no mode " + mode.text(),
-          "write a mode that its profile lists");
-      return false;
+          profile.abilities().instrument() + " does not offer the mode " + mode.text(),
+          "leave the job out, or write a mode that the profile lists");
     }
-    return true;
+    return run && offered;
   }
 
   /** What a job of that mode does at its region. */
   Optional<Acquisition> read(Fields fields, Mode mode) {
     checkKeys(fields, mode);
     ModeAbility ability = profile.abilities().modes().get(mode);
-    return mode == Mode.PHOTON_CORRELATION
-        ? spot(fields, mode, ability)
-        : raster(fields, mode, ability);
+    return mode == Mode.PHOTON_CORRELATION ? spot(fields, ability) : raster(fields, mode, ability);
   }
 
   private void checkKeys(Fields fields, Mode mode) {
-    JobReader.NOT_RUN.forEach(
+    NOT_RUN.forEach(
         (key, instead) ->
             fields
                 .key(key)
                 .ifPresent(node -> problems.error(node, Keys.notRunMessage(key), instead)));
-    for (String key : OF_SOME_MODES) {
-      if (!RUN.get(mode).contains(key)) {
-        fields
-            .key(key)
-            .ifPresent(
-                node ->
-                    problems.error(
-                        node, key + " has no meaning for " + mode.text(), "leave it out"));
-      }
-    }
+    OF_SOME_MODES.stream()
+        .filter(key -> !RUN.get(mode).contains(key))
+        .flatMap(key -> fields.key(key).stream())
+        .forEach(
+            node ->
+                problems.error(
+                    node, node.text() + " has no meaning for " + mode.text(), "leave it out"));
   }
 
   private Optional<Acquisition> raster(Fields fields, Mode mode, ModeAbility ability) {
-    Optional<List<Integer>> pixels = fields.need("pixels", "[512, 512]").flatMap(this::pixels);
+    boolean map = mode == Mode.INTENSITY_MAP;
+    Optional<List<Integer>> pixels = fields.need("pixels", PIXELS_EXAMPLE, this::pixels);
     Optional<Duration> dwell =
-        fields.need("dwell", "25 us").flatMap(node -> dwell(node, mode, ability));
-    Optional<List<String>> filters =
-        fields.has("filters") && mode == Mode.INTENSITY_MAP
-            ? fields.get("filters").flatMap(this::filters)
-            : Optional.of(List.of(Conditions.PANCHROMATIC));
-    Optional<Integer> frames =
-        fields.has("frames")
-            ? fields.get("frames").flatMap(node -> count(node, Limits.FRAMES))
-            : Optional.of(1);
-    fields.get("also").filter(node -> mode == Mode.INTENSITY_MAP).ifPresent(this::also);
-    return pixels.isEmpty() || dwell.isEmpty() || filters.isEmpty() || frames.isEmpty()
-        ? Optional.empty()
-        : Optional.of(
-            new Acquisition.Raster(
-                mode,
-                pixels.get().get(0),
-                pixels.get().get(1),
-                dwell.get(),
-                filters.get(),
-                frames.get()));
+        fields.need("dwell", "25 us", node -> time(node, ability, ability.longestDwell(), mode));
+    List<String> all = List.of(Conditions.PANCHROMATIC);
+    List<String> filters = map ? fields.or("filters", all, this::filters) : all;
+    int frames = fields.or("frames", 1, node -> count(node, Limits.FRAMES));
+    fields.get("also").filter(node -> map).ifPresent(this::also);
+    if (!Values.all(pixels, dwell)) {
+      return Optional.empty();
+    }
+    List<Integer> size = pixels.get();
+    return Optional.of(
+        new Acquisition.Raster(mode, size.get(0), size.get(1), dwell.get(), filters, frames));
   }
 
   private Optional<List<Integer>> pixels(Node node) {
-    return values
-        .pair(node, "[512, 512]")
-        .flatMap(
-            pair -> {
-              Optional<Integer> columns = count(pair.get(0), Limits.PIXELS);
-              Optional<Integer> rows = count(pair.get(1), Limits.PIXELS);
-              return columns.isEmpty() || rows.isEmpty()
-                  ? Optional.empty()
-                  : Optional.of(List.of(columns.get(), rows.get()));
-            });
+    Optional<List<Node>> pair = values.pair(node, PIXELS_EXAMPLE);
+    Optional<Integer> columns = pair.flatMap(items -> count(items.get(0), Limits.PIXELS));
+    Optional<Integer> rows = pair.flatMap(items -> count(items.get(1), Limits.PIXELS));
+    return columns.flatMap(width -> rows.map(height -> List.of(width, height)));
   }
 
   private Optional<Integer> count(Node node, int most) {
     return values.whole(node, 1, most).map(Long::intValue);
   }
 
-  private Optional<Duration> dwell(Node node, Mode mode, ModeAbility ability) {
-    return values
+  private Optional<Duration> time(Node node, ModeAbility ability, Duration longest, Mode mode) {
+    String whose = mode.text() + " on " + profile.abilities().instrument();
+    return quantities
         .time(node, Sign.POSITIVE)
-        .flatMap(
-            time ->
-                values.within(
-                    node,
-                    time,
-                    ability.shortestDwell(),
-                    ability.longestDwell(),
-                    mode.text() + " on " + profile.abilities().instrument(),
-                    Printed::time));
+        .flatMap(time -> quantities.within(node, time, ability.shortestDwell(), longest, whose));
   }
 
   private Optional<List<String>> filters(Node node) {
-    Optional<Node.Sequence> list = values.list(node, "[violet, green]");
-    if (list.isEmpty()) {
-      return Optional.empty();
-    }
-    List<String> names = new ArrayList<>();
-    for (Node item : list.get().items()) {
-      filter(item, names).ifPresent(names::add);
-    }
-    if (list.get().items().isEmpty()) {
-      problems.error(node, "filters is empty", "leave it out for a panchromatic map");
-    }
-    return Optional.of(names)
-        .filter(found -> found.size() == list.get().items().size())
-        .filter(found -> !found.isEmpty());
-  }
-
-  private Optional<String> filter(Node node, List<String> before) {
     List<String> known = new ArrayList<>(profile.abilities().filters().keySet());
     known.sort(null);
     known.add(Conditions.PANCHROMATIC);
-    Optional<String> name = values.scalar(node, Conditions.PANCHROMATIC).map(Node.Scalar::text);
-    if (name.isPresent() && !known.contains(name.get())) {
-      problems.error(
-          node,
-          profile.abilities().instrument() + " has no filter " + Printed.quoted(name.get()),
-          Near.advice(name.get(), known));
-      return Optional.empty();
+    String unknown = profile.abilities().instrument() + " has no filter";
+    List<String> names = new ArrayList<>();
+    for (Node item : values.items(node, FILTERS_EXAMPLE)) {
+      values
+          .known(item, known, unknown, Conditions.PANCHROMATIC)
+          .filter(name -> isNew(name, names, item))
+          .ifPresent(names::add);
     }
-    if (name.isPresent() && before.contains(name.get())) {
+    return Optional.of(names).filter(found -> !found.isEmpty());
+  }
+
+  private boolean isNew(String filter, List<String> before, Node node) {
+    boolean isNew = !before.contains(filter);
+    if (!isNew) {
       problems.error(
           node,
-          "the filter " + name.get() + " is listed twice, which would double its dose",
+          "the filter " + filter + " is listed twice, which would double its dose",
           "write it once, and frames: 2 when every pass is wanted twice");
-      return Optional.empty();
     }
-    return name;
+    return isNew;
   }
 
-  /** The electron image that costs no dose: accepted, for only the image itself is missing. */
+  /** An image of the electron detector beside a map costs no dose, so that leaving it is safe. */
   private void also(Node node) {
-    values
-        .list(node, "[electron-image]")
-        .ifPresent(
-            list -> {
-              for (Node item : list.items()) {
-                if (item instanceof Node.Scalar mode
-                    && mode.text().equals(Mode.ELECTRON_IMAGE.text())) {
-                  problems.warning(
-                      item,
-                      "the electron image beside a map is not recorded by this version",
-                      "leave also out, or write a job of mode electron-image, which costs dose");
-                } else {
-                  problems.error(
-                      item,
-                      Values.written(item) + " cannot be recorded beside a map",
-                      "write a job of its own for it");
-                }
-              }
-            });
+    for (Node item : values.items(node, "[electron-image]")) {
+      if (item instanceof Node.Scalar mode && mode.text().equals(Mode.ELECTRON_IMAGE.text())) {
+        problems.warning(
+            item,
+            "the electron image beside a map is not recorded by this version",
+            "leave also out, or write a job of mode electron-image, which costs dose");
+      } else {
+        problems.error(
+            item,
+            Values.written(item) + " cannot be recorded beside a map",
+            "write a job of its own for it");
+      }
+    }
   }
 
-  private Optional<Acquisition> spot(Fields fields, Mode mode, ModeAbility ability) {
+  private Optional<Acquisition> spot(Fields fields, ModeAbility ability) {
     Optional<Fields> until =
-        fields
-            .need("until", UNTIL_EXAMPLE)
-            .flatMap(node -> values.group(node, "until: " + UNTIL_EXAMPLE))
-            .map(
-                group -> {
-                  UNTIL.check(group, problems);
-                  return new Fields(group, Optional.empty(), UNTIL.of(), problems);
-                });
+        fields.need("until", UNTIL_EXAMPLE, node -> values.fields(node, UNTIL_EXAMPLE, UNTIL));
     Optional<Duration> longest =
-        until
-            .flatMap(found -> found.need("at-most", "PT3H"))
-            .flatMap(node -> longest(node, ability));
-    Optional<Node> wished = until.flatMap(found -> found.get("coincidences"));
+        until.flatMap(
+            found ->
+                found.need(
+                    "at-most",
+                    "PT3H",
+                    node -> time(node, ability, Limits.BEAM_ON, Mode.PHOTON_CORRELATION)));
     Optional<Long> coincidences =
-        wished.flatMap(node -> values.whole(node, 1, Limits.COINCIDENCES));
-    return longest.isEmpty() || wished.isPresent() != coincidences.isPresent()
-        ? Optional.empty()
-        : Optional.of(
-            new Acquisition.Spot(
-                mode,
-                longest.get(),
-                coincidences.map(OptionalLong::of).orElse(OptionalLong.empty())));
-  }
-
-  private Optional<Duration> longest(Node node, ModeAbility ability) {
-    return values
-        .time(node, Sign.POSITIVE)
-        .flatMap(
-            time ->
-                values.within(
-                    node,
-                    time,
-                    ability.shortestDwell(),
-                    Limits.TIME,
-                    "photon-correlation on " + profile.abilities().instrument(),
-                    Printed::time));
+        until
+            .flatMap(found -> found.get("coincidences"))
+            .flatMap(node -> values.whole(node, 1, Limits.COINCIDENCES));
+    OptionalLong enough = coincidences.map(OptionalLong::of).orElse(OptionalLong.empty());
+    return longest.map(time -> new Acquisition.Spot(Mode.PHOTON_CORRELATION, time, enough));
   }
 }

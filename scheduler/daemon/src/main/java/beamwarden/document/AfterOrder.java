@@ -30,9 +30,9 @@ final class AfterOrder {
           problems.error(
               name,
               "after names " + Printed.quoted(name.text()) + ", and this queue has no such job",
-              Near.to(name.text(), afterByJob.keySet())
-                  .map(near -> "did you mean " + near + "?")
-                  .orElse("write the id of a job of this queue"));
+              () ->
+                  Near.question(name.text(), afterByJob.keySet())
+                      .orElse("write the id of a job of this queue"));
         }
       }
     }

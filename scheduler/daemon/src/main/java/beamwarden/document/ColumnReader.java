@@ -1,7 +1,7 @@
 package beamwarden.document;
 
-import beamwarden.document.Values.Range;
-import beamwarden.document.Values.Sign;
+import beamwarden.document.Quantities.Range;
+import beamwarden.document.Quantities.Sign;
 import beamwarden.instrument.Column;
 import beamwarden.instrument.CurrentMeter;
 import beamwarden.instrument.Probe;
@@ -33,116 +33,120 @@ final class ColumnReader {
           .notRun(Map.of("steps", CONTINUOUS));
   private static final Keys PROBE = Keys.of("a probe", "voltage", "current", "diameter");
 
-  private static final String VOLTAGE_EXAMPLE = "{ range: [1 kV, 30 kV], settling: 12 min }";
+  private static final String VOLTAGES = "[1 kV, 30 kV]";
+  private static final String CURRENTS = "[2 pA, 40 nA]";
+  private static final String VOLTAGE_EXAMPLE = "{ range: " + VOLTAGES + ", settling: 12 min }";
   private static final String CURRENT_EXAMPLE =
-      "{ range: [2 pA, 40 nA], settling: 2 min, meter: 3 %, meter-floor: 0.2 pA,"
-          + " reading-every: PT1H, drift: 10 % }";
+      "{ range: "
+          + CURRENTS
+          + ", settling: 2 min, meter: 3 %, meter-floor: 0.2 pA, reading-every: PT1H,"
+          + " drift: 10 % }";
   private static final String PROBE_EXAMPLE = "{ voltage: 8 kV, current: 350 pA, diameter: 6 nm }";
   private static final String MOST_TOLERANCE = "50 %";
   private static final Duration USUAL_READING = Duration.ofSeconds(30);
 
   private final Values values;
+  private final Quantities quantities;
   private final Problems problems;
 
   ColumnReader(Values values, Problems problems) {
     this.values = values;
     this.problems = problems;
+    this.quantities = new Quantities(values, problems);
   }
 
   Optional<Column> column(Fields profile) {
     Optional<Fields> voltage =
-        profile
-            .need("voltage", VOLTAGE_EXAMPLE)
-            .flatMap(node -> values.fields(node, VOLTAGE_EXAMPLE, VOLTAGE));
+        profile.need(
+            "voltage", VOLTAGE_EXAMPLE, node -> values.fields(node, VOLTAGE_EXAMPLE, VOLTAGE));
     Optional<Fields> current =
-        profile
-            .need("current", CURRENT_EXAMPLE)
-            .flatMap(node -> values.fields(node, CURRENT_EXAMPLE, CURRENT));
-    Optional<Range> volts =
-        voltage.flatMap(found -> range(found, Dimension.VOLTAGE, "[1 kV, 30 kV]"));
-    Optional<Range> amperes =
-        current.flatMap(found -> range(found, Dimension.CURRENT, "[2 pA, 40 nA]"));
+        profile.need(
+            "current", CURRENT_EXAMPLE, node -> values.fields(node, CURRENT_EXAMPLE, CURRENT));
+    Optional<Range<Voltage>> volts =
+        voltage.flatMap(found -> found.need("range", VOLTAGES, this::voltages));
+    Optional<Range<Current>> amperes =
+        current.flatMap(found -> found.need("range", CURRENTS, this::currents));
     Optional<Duration> voltageSettling = voltage.flatMap(found -> settling(found, "12 min"));
     Optional<Duration> currentSettling = current.flatMap(found -> settling(found, "2 min"));
-    return volts.isEmpty()
-            || amperes.isEmpty()
-            || voltageSettling.isEmpty()
-            || currentSettling.isEmpty()
-        ? Optional.empty()
-        : Optional.of(
+    return Values.all(volts, amperes, voltageSettling, currentSettling)
+        ? Optional.of(
             new Column(
-                new Voltage(volts.get().low().doubleValue()),
-                new Voltage(volts.get().high().doubleValue()),
+                volts.get().low(),
+                volts.get().high(),
                 voltageSettling.get(),
-                new Current(amperes.get().low().doubleValue()),
-                new Current(amperes.get().high().doubleValue()),
-                currentSettling.get()));
+                amperes.get().low(),
+                amperes.get().high(),
+                currentSettling.get()))
+        : Optional.empty();
   }
 
-  private Optional<Range> range(Fields fields, Dimension dimension, String example) {
-    return fields
-        .need("range", example)
-        .flatMap(node -> values.range(node, dimension, Sign.POSITIVE, example));
+  private Optional<Range<Voltage>> voltages(Node node) {
+    return quantities.range(node, VOLTAGES, quantities::voltage);
+  }
+
+  private Optional<Range<Current>> currents(Node node) {
+    return quantities.range(node, CURRENTS, quantities::current);
   }
 
   private Optional<Duration> settling(Fields fields, String example) {
-    return fields.need("settling", example).flatMap(node -> values.time(node, Sign.NOT_NEGATIVE));
+    return fields.need("settling", example, node -> quantities.time(node, Sign.NOT_NEGATIVE));
   }
 
+  /** How the current is measured; it stands among the keys of the current. */
   Optional<CurrentMeter> meter(Fields profile) {
     if (!(profile.get("current").orElse(null) instanceof Node.Mapping group)) {
       return Optional.empty();
     }
-    Fields fields = new Fields(group, Optional.empty(), CURRENT.of(), problems);
-    Optional<Double> tolerance = part(fields, "meter", "3 %");
-    Optional<Double> drift = part(fields, "drift", "10 %");
-    Optional<Current> floor =
-        fields
-            .need("meter-floor", "0.2 pA")
-            .flatMap(node -> values.current(node, Sign.NOT_NEGATIVE));
+    Fields fields = new Fields(group, CURRENT, problems);
+    Optional<Double> tolerance = fields.need("meter", "3 %", this::tolerance);
+    Optional<Double> drift = fields.need("drift", "10 %", this::tolerance);
+    Optional<Double> floor =
+        fields.need(
+            "meter-floor",
+            "0.2 pA",
+            node -> quantities.number(node, Dimension.CURRENT, Sign.NOT_NEGATIVE));
     Optional<Duration> every =
-        fields.need("reading-every", "PT1H").flatMap(node -> values.time(node, Sign.POSITIVE));
-    Optional<Duration> takes =
-        fields.has("reading-takes")
-            ? fields.get("reading-takes").flatMap(node -> values.time(node, Sign.NOT_NEGATIVE))
-            : Optional.of(USUAL_READING);
-    return tolerance.isEmpty()
-            || drift.isEmpty()
-            || floor.isEmpty()
-            || every.isEmpty()
-            || takes.isEmpty()
-        ? Optional.empty()
-        : Optional.of(
-            new CurrentMeter(tolerance.get(), floor.get(), drift.get(), every.get(), takes.get()));
+        fields.need("reading-every", "PT1H", node -> quantities.time(node, Sign.POSITIVE));
+    Duration takes =
+        fields.or("reading-takes", USUAL_READING, node -> quantities.time(node, Sign.NOT_NEGATIVE));
+    if (every.isPresent() && every.get().compareTo(takes) <= 0) {
+      problems.error(
+          fields.get("reading-every").orElse(group),
+          "readings come every "
+              + Printed.time(every.get())
+              + " and take "
+              + Printed.time(takes)
+              + " each, so that no time is left",
+          "write a longer reading-every");
+    }
+    return Values.all(tolerance, drift, floor, every)
+        ? Optional.of(
+            new CurrentMeter(
+                tolerance.get(), new Current(floor.get()), drift.get(), every.get(), takes))
+        : Optional.empty();
   }
 
-  private Optional<Double> part(Fields fields, String key, String example) {
-    return fields.need(key, example).flatMap(node -> values.part(node, MOST_TOLERANCE));
+  private Optional<Double> tolerance(Node node) {
+    return quantities.part(node, MOST_TOLERANCE);
   }
 
   /** The measured probes, those with problems left out. */
-  List<Probe> probes(Node node) {
+  Optional<List<Probe>> probes(Node node) {
     List<Probe> probes = new ArrayList<>();
-    values
-        .list(node, "[" + PROBE_EXAMPLE + "]")
-        .ifPresent(list -> list.items().forEach(item -> probe(item).ifPresent(probes::add)));
-    return probes;
+    Optional<Node.Sequence> list = values.list(node, "[" + PROBE_EXAMPLE + "]");
+    for (Node item : list.map(Node.Sequence::items).orElse(List.of())) {
+      values.fields(item, PROBE_EXAMPLE, PROBE).flatMap(this::probe).ifPresent(probes::add);
+    }
+    return Optional.of(probes);
   }
 
-  private Optional<Probe> probe(Node node) {
-    Optional<Fields> fields = values.fields(node, PROBE_EXAMPLE, PROBE);
-    Optional<Voltage> voltage =
-        fields.flatMap(found -> found.need("voltage", "8 kV")).flatMap(values::voltage);
-    Optional<Current> current =
-        fields
-            .flatMap(found -> found.need("current", "350 pA"))
-            .flatMap(found -> values.current(found, Sign.POSITIVE));
+  private Optional<Probe> probe(Fields fields) {
+    Optional<Voltage> voltage = fields.need("voltage", "8 kV", quantities::voltage);
+    Optional<Current> current = fields.need("current", "350 pA", quantities::current);
     Optional<Length> diameter =
-        fields
-            .flatMap(found -> found.need("diameter", "6 nm"))
-            .flatMap(found -> values.length(found, Sign.POSITIVE));
-    return voltage.isEmpty() || current.isEmpty() || diameter.isEmpty()
-        ? Optional.empty()
-        : Optional.of(new Probe(voltage.get(), current.get(), diameter.get()));
+        fields.need("diameter", "6 nm", node -> quantities.length(node, Sign.POSITIVE));
+    return Values.all(voltage, current, diameter)
+        ? Optional.of(new Probe(voltage.get(), current.get(), diameter.get()))
+        : Optional.empty();
   }
 }

@@ -29,7 +29,7 @@ public final class Documents {
    * problem of the reading.
    */
   public static Reading<String> text(Path file) {
-    Problems problems = new Problems(name(file));
+    Problems problems = new Problems(file.toString());
     Optional<String> text = bytes(file, problems).flatMap(bytes -> decoded(bytes, problems));
     return problems.reading(text);
   }
@@ -48,7 +48,7 @@ public final class Documents {
   static <T> Reading<T> read(Path file, BiFunction<String, String, Reading<T>> reader) {
     Reading<String> text = text(file);
     return text.value()
-        .map(found -> reader.apply(name(file), found))
+        .map(found -> reader.apply(file.toString(), found))
         .orElseGet(() -> new Reading<>(Optional.empty(), text.problems()));
   }
 
@@ -58,10 +58,6 @@ public final class Documents {
     return fits(bare, problems) && clean(bare, problems)
         ? TreeReader.read(bare, problems)
         : Optional.empty();
-  }
-
-  private static String name(Path file) {
-    return Optional.ofNullable(file.getFileName()).orElse(file).toString();
   }
 
   private static Optional<byte[]> bytes(Path file, Problems problems) {

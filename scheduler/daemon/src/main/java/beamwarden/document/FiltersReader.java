@@ -1,10 +1,9 @@
 package beamwarden.document;
 
 import beamwarden.beam.Conditions;
-import beamwarden.document.Values.Range;
-import beamwarden.document.Values.Sign;
+import beamwarden.document.Quantities.Range;
+import beamwarden.document.Quantities.Sign;
 import beamwarden.instrument.Filter;
-import beamwarden.quantity.Dimension;
 import beamwarden.quantity.Length;
 import java.time.Duration;
 import java.util.LinkedHashMap;
@@ -17,14 +16,17 @@ final class FiltersReader {
   static final Filters NONE = new Filters(Map.of(), Duration.ZERO);
 
   private static final String CHANGE = "change";
+  private static final Keys KEYS = Keys.of("a set of filters", CHANGE);
   private static final String EXAMPLE = "{ violet: [380 nm, 450 nm], change: 4 s }";
 
   private final Values values;
+  private final Quantities quantities;
   private final Problems problems;
 
   FiltersReader(Values values, Problems problems) {
     this.values = values;
     this.problems = problems;
+    this.quantities = new Quantities(values, problems);
   }
 
   /**
@@ -35,21 +37,20 @@ final class FiltersReader {
    */
   record Filters(Map<String, Filter> byName, Duration change) {}
 
-  Filters read(Node node) {
-    Optional<Node.Mapping> group = values.group(node, "filters: " + EXAMPLE);
-    if (group.isEmpty()) {
-      return NONE;
-    }
+  Optional<Filters> read(Node node) {
+    return values.group(node, EXAMPLE).flatMap(this::filters);
+  }
+
+  private Optional<Filters> filters(Node.Mapping group) {
     Map<String, Filter> filters = new LinkedHashMap<>();
-    for (Node.Field field : group.get().fields()) {
+    for (Node.Field field : group.fields()) {
       if (!field.key().text().equals(CHANGE)) {
         filter(field).ifPresent(filter -> filters.put(field.key().text(), filter));
       }
     }
-    Fields fields = new Fields(group.get(), Optional.empty(), "filters", problems);
-    Optional<Duration> change =
-        fields.need(CHANGE, "4 s").flatMap(found -> values.time(found, Sign.NOT_NEGATIVE));
-    return new Filters(filters, change.orElse(Duration.ZERO));
+    return new Fields(group, KEYS, problems)
+        .need(CHANGE, "4 s", node -> quantities.time(node, Sign.NOT_NEGATIVE))
+        .map(change -> new Filters(filters, change));
   }
 
   private Optional<Filter> filter(Node.Field field) {
@@ -58,16 +59,13 @@ final class FiltersReader {
           field.key(),
           "panchromatic stands for no filter at all",
           "leave it out; it needs no entry here");
-      return Optional.empty();
     }
-    Optional<String> name = values.id(field.key());
-    Optional<Range> range =
-        values.range(field.value(), Dimension.LENGTH, Sign.POSITIVE, "[380 nm, 450 nm]");
-    return name.isEmpty()
-        ? Optional.empty()
-        : range.map(
-            found ->
-                new Filter(
-                    new Length(found.low().doubleValue()), new Length(found.high().doubleValue())));
+    Optional<String> name = values.id(field.key(), "violet");
+    Optional<Range<Length>> range =
+        quantities.range(
+            field.value(), "[380 nm, 450 nm]", item -> quantities.length(item, Sign.POSITIVE));
+    return Values.all(name, range)
+        ? Optional.of(new Filter(range.get().low(), range.get().high()))
+        : Optional.empty();
   }
 }

@@ -3,7 +3,6 @@ package beamwarden.document;
 import beamwarden.beam.BeamSettings;
 import beamwarden.beam.Mode;
 import beamwarden.beam.Region;
-import beamwarden.document.Values.Sign;
 import beamwarden.instrument.Column;
 import beamwarden.profile.Profile;
 import beamwarden.quantity.Current;
@@ -13,26 +12,12 @@ import beamwarden.queue.AtCap;
 import beamwarden.queue.Job;
 import beamwarden.queue.Sample;
 import java.time.Instant;
-import java.util.ArrayList;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
-import java.util.TreeMap;
 
 /** Reads jobs and checks them against the instrument. */
 final class JobReader {
-  /** Keys that this version knows and does not run, each with what to write instead. */
-  static final Map<String, String> NOT_RUN =
-      new TreeMap<>(
-          Map.of(
-              "integration", "write a job of a mode that is run",
-              "analyser", "leave it out; every pass is made without an analyser",
-              "grating", "leave it out; a map through filters needs none",
-              "slit", "leave it out; a map through filters needs none",
-              "repetition", "leave it out; the beam is not pulsed",
-              "registration", "leave it out; the uncertainty of the placement covers drift",
-              "prior-dose", "leave it out, and set a cap that leaves no room for more"));
-
   private static final Keys KEYS =
       Keys.of(
               "a job",
@@ -54,76 +39,90 @@ final class JobReader {
               "at-cap",
               "earliest",
               "deadline")
-          .notRun(NOT_RUN);
+          .accepting(AcquisitionReader.NOT_RUN.keySet());
   private static final String EXAMPLE = "{ id: survey, sample: sst-07, mode: electron-image, … }";
   private static final Map<String, AtCap> AT_CAP =
       Map.of("refuse", AtCap.REFUSE, "trim", AtCap.TRIM, "ask", AtCap.ASK);
 
   private final Profile profile;
   private final Map<String, Optional<Sample>> samples;
+  private final Recipes recipes;
   private final Values values;
+  private final Quantities quantities;
   private final Problems problems;
   private final AcquisitionReader acquisitions;
   private final RegionReader regions;
   private final LabTime times;
 
+  /**
+   * Reads jobs of one queue.
+   *
+   * @param samples the samples of the queue by id; one with problems of its own is empty
+   * @param recipes the recipes of the queue
+   */
   JobReader(
-      Profile profile, Map<String, Optional<Sample>> samples, Values values, Problems problems) {
+      Profile profile, Map<String, Optional<Sample>> samples, Recipes recipes, Problems problems) {
     this.profile = profile;
     this.samples = samples;
-    this.values = values;
+    this.recipes = recipes;
     this.problems = problems;
+    this.values = new Values(problems);
+    this.quantities = new Quantities(values, problems);
     this.acquisitions = new AcquisitionReader(profile, values, problems);
     this.regions = new RegionReader(profile, values, problems);
     this.times = new LabTime(profile.zone(), values, problems);
   }
 
   /** The values of a job, completed by those of its recipe. */
-  Optional<Fields> fields(Node node, Recipes recipes) {
-    Optional<Node.Mapping> group = values.group(node, EXAMPLE);
-    if (group.isEmpty()) {
-      return Optional.empty();
-    }
-    KEYS.checkUnknown(group.get(), problems);
-    Fields own = new Fields(group.get(), Optional.empty(), KEYS.of(), problems);
-    Optional<Fields> recipe =
-        own.get("recipe").flatMap(name -> values.scalar(name, "gentle")).flatMap(recipes::of);
-    return Optional.of(new Fields(group.get(), recipe, KEYS.of(), problems));
+  Optional<Fields> fields(Node node) {
+    return values
+        .fields(node, EXAMPLE, KEYS)
+        .map(
+            own -> own.get("recipe").map(name -> own.completedBy(recipes.named(name))).orElse(own));
   }
 
   /** The ids of the jobs after which this one comes. */
   List<Node.Scalar> after(Fields fields) {
-    List<Node.Scalar> after = new ArrayList<>();
-    fields
+    return fields
         .get("after")
         .flatMap(node -> values.list(node, "[survey]"))
-        .ifPresent(
-            list ->
-                list.items().forEach(item -> values.scalar(item, "survey").ifPresent(after::add)));
-    return after;
+        .map(list -> list.items().stream().flatMap(item -> name(item).stream()).toList())
+        .orElse(List.of());
+  }
+
+  private Optional<Node.Scalar> name(Node item) {
+    return values.scalar(item, "survey");
   }
 
   Optional<Job> read(Fields fields, Optional<String> id, List<Node.Scalar> after) {
-    Optional<String> sample = fields.need("sample", "sst-07").flatMap(this::sample);
-    Optional<Mode> mode = acquisitions.mode(fields);
+    Optional<String> sample =
+        fields.need(
+            "sample",
+            "sst-07",
+            node -> values.known(node, samples.keySet(), "this queue has no sample", "sst-07"));
     Optional<BeamSettings> beam = beam(fields);
+    Optional<Mode> mode = acquisitions.mode(fields);
     Optional<Acquisition> acquisition = mode.flatMap(known -> acquisitions.read(fields, known));
     Optional<Region> region =
-        mode.flatMap(
-            known ->
-                fields
-                    .need("region", RegionReader.example(known))
-                    .flatMap(node -> regions.read(node, known, sample.flatMap(samples::get))));
-    Optional<Integer> priority = priority(fields);
-    Optional<AtCap> atCap = atCap(fields);
+        mode.flatMap(known -> regions.read(fields, known, sample.flatMap(samples::get)));
+    if (Values.all(acquisition, region)) {
+      new JobSize(problems).check(fields, acquisition.get(), region.get());
+    }
+    int priority =
+        fields.or(
+            "priority",
+            Job.USUAL_PRIORITY,
+            node ->
+                values.whole(node, Job.LOWEST_PRIORITY, Job.HIGHEST_PRIORITY).map(Long::intValue));
+    AtCap atCap =
+        fields.or(
+            "at-cap",
+            AtCap.REFUSE,
+            node -> values.choice(node, AT_CAP, List.of("refuse", "trim", "ask")));
     Optional<Instant> earliest = fields.get("earliest").flatMap(times::moment);
     Optional<Instant> deadline = fields.get("deadline").flatMap(times::moment);
     checkOrder(fields, earliest, deadline);
-    if (id.isEmpty()
-        || sample.isEmpty()
-        || beam.isEmpty()
-        || acquisition.isEmpty()
-        || region.isEmpty()) {
+    if (!Values.all(id, sample, beam, acquisition, region)) {
       return Optional.empty();
     }
     return Optional.of(
@@ -133,85 +132,53 @@ final class JobReader {
             acquisition.get(),
             region.get(),
             beam.get(),
-            priority.orElse(Job.USUAL_PRIORITY),
+            priority,
             after.stream().map(Node.Scalar::text).distinct().toList(),
-            atCap.orElse(AtCap.REFUSE),
+            atCap,
             earliest,
             deadline));
-  }
-
-  private Optional<String> sample(Node node) {
-    return values
-        .scalar(node, "sst-07")
-        .map(Node.Scalar::text)
-        .filter(
-            name -> {
-              boolean known = samples.containsKey(name);
-              if (!known) {
-                problems.error(
-                    node,
-                    "this queue has no sample " + Printed.quoted(name),
-                    Near.advice(name, samples.keySet()));
-              }
-              return known;
-            });
   }
 
   private Optional<BeamSettings> beam(Fields fields) {
     Column column = profile.abilities().column();
     String whose = profile.abilities().instrument();
     Optional<Voltage> voltage =
-        fields
-            .need("voltage", "8 kV")
-            .flatMap(
-                node ->
-                    values
-                        .voltage(node)
-                        .flatMap(
-                            value ->
-                                values.within(
-                                    node,
-                                    value,
-                                    column.lowestVoltage(),
-                                    column.highestVoltage(),
-                                    whose,
-                                    Voltage::toString)));
+        fields.need(
+            "voltage",
+            "8 kV",
+            node ->
+                quantities
+                    .voltage(node)
+                    .flatMap(
+                        value ->
+                            quantities.within(
+                                node,
+                                value,
+                                column.lowestVoltage(),
+                                column.highestVoltage(),
+                                whose)));
     Optional<Current> current =
-        fields
-            .need("current", "350 pA")
-            .flatMap(
-                node ->
-                    values
-                        .current(node, Sign.POSITIVE)
-                        .flatMap(
-                            value ->
-                                values.within(
-                                    node,
-                                    value,
-                                    column.lowestCurrent(),
-                                    column.highestCurrent(),
-                                    whose,
-                                    Current::toString)));
-    return voltage.isEmpty() || current.isEmpty()
-        ? Optional.empty()
-        : Optional.of(new BeamSettings(voltage.get(), current.get()));
-  }
-
-  private Optional<Integer> priority(Fields fields) {
-    return fields
-        .get("priority")
-        .flatMap(node -> values.whole(node, Job.LOWEST_PRIORITY, Job.HIGHEST_PRIORITY))
-        .map(Long::intValue);
-  }
-
-  private Optional<AtCap> atCap(Fields fields) {
-    return fields
-        .get("at-cap")
-        .flatMap(node -> values.choice(node, AT_CAP, List.of("refuse", "trim", "ask")));
+        fields.need(
+            "current",
+            "350 pA",
+            node ->
+                quantities
+                    .current(node)
+                    .flatMap(
+                        value ->
+                            quantities.within(
+                                node,
+                                value,
+                                column.lowestCurrent(),
+                                column.highestCurrent(),
+                                whose)));
+    return Values.all(voltage, current)
+        ? Optional.of(new BeamSettings(voltage.get(), current.get()))
+        : Optional.empty();
   }
 
   private void checkOrder(Fields fields, Optional<Instant> earliest, Optional<Instant> deadline) {
-    if (earliest.isPresent() && deadline.isPresent() && !earliest.get().isBefore(deadline.get())) {
+    if (Values.all(earliest, deadline) && !earliest.get().isBefore(deadline.get())) {
       problems.error(
           fields.get("deadline").orElseThrow(),
           "deadline does not come after earliest",

@@ -31,6 +31,12 @@ final class Limits {
   /** Pixels along one side of a raster. */
   static final int PIXELS = 32_768;
 
+  /** Passes of a job: tiles times frames times filters, or points. */
+  static final int PASSES = 10_000;
+
+  /** The beam-on time of a job. */
+  static final Duration BEAM_ON = Duration.ofDays(31);
+
   /** Frames of a job. */
   static final int FRAMES = 10_000;
 
@@ -40,8 +46,17 @@ final class Limits {
   /** Coincidences that a job may wait for. */
   static final long COINCIDENCES = 1_000_000_000_000L;
 
+  /** Rules for shifts in a profile. */
+  static final int SHIFTS = 400;
+
   /** Retries of one exposure. */
   static final int RETRIES = 10;
+
+  /** The years of any date in a document. */
+  static final int FIRST_YEAR = 2000;
+
+  /** The years of any date in a document. */
+  static final int LAST_YEAR = 2199;
 
   /** Any time in a document. */
   static final Duration TIME = Duration.ofDays(366);

@@ -20,15 +20,20 @@ final class Near {
     }
     int allowed = Math.max(1, written.length() / LETTERS_PER_MISTAKE);
     return known.stream()
+        .filter(name -> Math.abs(name.length() - written.length()) <= allowed)
         .filter(name -> distance(written, name) <= allowed)
         .min(Comparator.comparingInt((String name) -> distance(written, name)));
   }
 
-  /** Advice that names the nearest name, or all of them. */
+  /** A question that names the nearest name, when one is near. */
+  static Optional<String> question(String written, Collection<String> known) {
+    return to(written, known).map(near -> "did you mean " + near + "?");
+  }
+
+  /** The question, or all names there are to choose from. */
   static String advice(String written, Collection<String> known) {
-    return to(written, known)
-        .map(near -> "did you mean " + near + "?")
-        .orElseGet(() -> known.isEmpty() ? "there is none" : "write " + Printed.anyOf(known));
+    return question(written, known)
+        .orElseGet(() -> known.isEmpty() ? "there is none yet" : "write " + Printed.anyOf(known));
   }
 
   private static int distance(String written, String name) {

@@ -4,18 +4,18 @@ import java.util.List;
 
 /** A piece of a document's text that knows where it stands: YAML and JSON give the same. */
 sealed interface Node {
-  /** Where it begins. */
+  /** Where it begins in the text. */
   Mark mark();
 
-  /** Its place in the structure. */
-  Place path();
+  /** Where it is in the structure. */
+  Place place();
 
   /** What a person calls this kind of node. */
   String kind();
 
   /** The key under which it stands, the nearest one for an item of a list. */
   default String name() {
-    return path().name();
+    return place().name();
   }
 
   /**
@@ -30,11 +30,11 @@ sealed interface Node {
    * One value.
    *
    * @param mark where it begins
-   * @param path its place
+   * @param place its place in the structure
    * @param text the value as it is written, quotes undone
    * @param plain whether it was written without quotes
    */
-  record Scalar(Mark mark, Place path, String text, boolean plain) implements Node {
+  record Scalar(Mark mark, Place place, String text, boolean plain) implements Node {
     /** Whether nothing was written, or that there is nothing. */
     boolean empty() {
       return plain && (text.isEmpty() || text.equals("~") || text.equals("null"));
@@ -42,7 +42,7 @@ sealed interface Node {
 
     @Override
     public String kind() {
-      return "one value";
+      return empty() ? "empty" : "one value";
     }
   }
 
@@ -50,10 +50,10 @@ sealed interface Node {
    * A list.
    *
    * @param mark where it begins
-   * @param path its place
+   * @param place its place in the structure
    * @param items what is in it
    */
-  record Sequence(Mark mark, Place path, List<Node> items) implements Node {
+  record Sequence(Mark mark, Place place, List<Node> items) implements Node {
     @Override
     public String kind() {
       return "a list";
@@ -64,10 +64,10 @@ sealed interface Node {
    * A group of keys with their values, each key once.
    *
    * @param mark where it begins
-   * @param path its place
+   * @param place its place in the structure
    * @param fields the keys in the order in which they are written
    */
-  record Mapping(Mark mark, Place path, List<Field> fields) implements Node {
+  record Mapping(Mark mark, Place place, List<Field> fields) implements Node {
     @Override
     public String kind() {
       return "a group of keys";

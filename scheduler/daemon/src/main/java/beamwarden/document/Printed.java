@@ -19,6 +19,11 @@ final class Printed {
 
   private Printed() {}
 
+  /** A quantity with its unit. */
+  static String value(Object quantity) {
+    return quantity instanceof Duration time ? time(time) : quantity.toString();
+  }
+
   /** A time in the largest unit of which it has at least one. */
   static String time(Duration time) {
     for (int index = 0; index < UNITS.size(); index++) {

@@ -6,6 +6,7 @@ import java.util.LinkedHashSet;
 import java.util.List;
 import java.util.Optional;
 import java.util.Set;
+import java.util.function.Supplier;
 import java.util.stream.Stream;
 
 /** Gathers the problems of one document, each once. Not safe for use by several threads. */
@@ -15,31 +16,32 @@ final class Problems {
 
   private final String file;
   private final Set<Problem> found = new LinkedHashSet<>();
+  private boolean usable = true;
   private int unlisted;
 
   Problems(String file) {
-    this.file = Printed.quoted(file);
-  }
-
-  String file() {
-    return file;
+    this.file = Printed.line(file);
   }
 
   void error(Node node, String message, String advice) {
-    add(Severity.ERROR, node.mark(), node.path(), message, advice);
+    error(node, message, () -> advice);
+  }
+
+  /** The advice is worked out only when there is room for the problem. */
+  void error(Node node, String message, Supplier<String> advice) {
+    add(Severity.ERROR, node.mark(), node.place(), message, advice);
   }
 
   void warning(Node node, String message, String advice) {
-    add(Severity.WARNING, node.mark(), node.path(), message, advice);
+    add(Severity.WARNING, node.mark(), node.place(), message, () -> advice);
   }
 
   void error(Node.Mark mark, String message, String advice) {
-    add(Severity.ERROR, mark, Place.TOP, message, advice);
+    add(Severity.ERROR, mark, Place.TOP, message, () -> advice);
   }
 
   /** The value when nothing forbids its use, with all that was found. */
   <T> Reading<T> reading(Optional<T> value) {
-    boolean usable = found.stream().noneMatch(each -> each.severity() == Severity.ERROR);
     return new Reading<>(usable ? value : Optional.empty(), sorted());
   }
 
@@ -51,7 +53,7 @@ final class Problems {
     Problem last = sorted.get(sorted.size() - 1);
     Problem more =
         new Problem(
-            Severity.ERROR,
+            usable ? Severity.WARNING : Severity.ERROR,
             file,
             last.line(),
             last.column(),
@@ -61,16 +63,15 @@ final class Problems {
     return Stream.concat(sorted.stream(), Stream.of(more)).toList();
   }
 
-  private void add(Severity severity, Node.Mark mark, Place path, String message, String advice) {
-    Problem problem =
-        new Problem(severity, file, mark.line(), mark.column(), path.toString(), message, advice);
-    if (found.contains(problem)) {
+  private void add(
+      Severity severity, Node.Mark mark, Place place, String message, Supplier<String> advice) {
+    usable &= severity != Severity.ERROR;
+    if (found.size() >= Limits.PROBLEMS) {
+      unlisted++;
       return;
     }
-    if (found.size() < Limits.PROBLEMS) {
-      found.add(problem);
-    } else {
-      unlisted++;
-    }
+    found.add(
+        new Problem(
+            severity, file, mark.line(), mark.column(), place.toString(), message, advice.get()));
   }
 }

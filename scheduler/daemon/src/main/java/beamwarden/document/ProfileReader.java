@@ -1,8 +1,7 @@
 package beamwarden.document;
 
 import beamwarden.beam.Mode;
-import beamwarden.document.Values.Range;
-import beamwarden.document.Values.Sign;
+import beamwarden.document.Quantities.Sign;
 import beamwarden.instrument.Abilities;
 import beamwarden.instrument.Blanker;
 import beamwarden.instrument.Column;
@@ -11,7 +10,6 @@ import beamwarden.instrument.Field;
 import beamwarden.instrument.ModeAbility;
 import beamwarden.instrument.Stage;
 import beamwarden.profile.Profile;
-import beamwarden.quantity.Dimension;
 import beamwarden.shift.ShiftRule;
 import java.time.Duration;
 import java.time.ZoneId;
@@ -19,7 +17,7 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
-import java.util.TreeMap;
+import java.util.Set;
 
 /** Reads a whole instrument profile. */
 final class ProfileReader {
@@ -42,26 +40,25 @@ final class ProfileReader {
               "shifts",
               "retries",
               "re-arm")
-          .described("gratings", "changes");
-  private static final Keys STAGE =
-      Keys.of("a stage", "x", "y", "speed", "acceleration", "settling", "repeatability");
-  private static final Keys FIELD = Keys.of("a field", "largest", "calibration");
-  private static final Keys BLANKER = Keys.of("a blanker", "kind", "alone");
+          .accepting(List.of("gratings", "changes"));
 
-  private static final String STAGE_EXAMPLE =
-      "{ x: [-25 mm, 25 mm], y: [-25 mm, 25 mm], speed: 1 mm/s, acceleration: 10 mm/s2,"
-          + " settling: 2 s, repeatability: 2 um }";
-  private static final String FIELD_EXAMPLE = "{ largest: 0.5 mm, calibration: 2 % }";
-  private static final String BLANKER_EXAMPLE = "{ kind: fast, alone: 0.1 ms }";
-  private static final String MOST_CALIBRATION = "50 %";
+  private static final String ZONE_EXAMPLE = "Europe/Ljubljana";
   private static final int USUAL_RETRIES = 3;
 
   private final Values values;
+  private final Quantities quantities;
   private final Problems problems;
+  private final ColumnReader columns;
+  private final BlankerReader blankers;
+  private final StageReader stages;
 
   ProfileReader(Problems problems) {
     this.problems = problems;
     this.values = new Values(problems);
+    this.quantities = new Quantities(values, problems);
+    this.columns = new ColumnReader(values, problems);
+    this.blankers = new BlankerReader(values, problems);
+    this.stages = new StageReader(values, problems);
   }
 
   Optional<Profile> read(Node top) {
@@ -73,197 +70,85 @@ final class ProfileReader {
       return Optional.empty();
     }
     KEYS.check(group, problems);
-    Fields fields = new Fields(group, Optional.empty(), KEYS.of(), problems);
-    Optional<Blanker> blanker = fields.need("blanker", BLANKER_EXAMPLE).flatMap(this::blanker);
+    Fields fields = new Fields(group, KEYS, problems);
+    Optional<Blanker> blanker = fields.need("blanker", BlankerReader.EXAMPLE, blankers::blanker);
     Optional<Abilities> abilities = abilities(fields, blanker);
     Optional<String> adapter =
-        fields.need("adapter", "simulated").flatMap(node -> values.id(node, "simulated"));
-    Map<String, String> options = fields.get("options").map(this::options).orElse(Map.of());
-    Optional<ZoneId> zone = fields.need("time-zone", "Europe/Ljubljana").flatMap(this::zone);
+        fields.need("adapter", "simulated", node -> values.id(node, "simulated"));
+    Map<String, String> options = fields.or("options", Map.of(), this::options);
+    Optional<ZoneId> zone = fields.need("time-zone", ZONE_EXAMPLE, this::zone);
     Optional<Duration> windDown =
-        fields.need("wind-down", "10 min").flatMap(node -> values.time(node, Sign.POSITIVE));
-    List<ShiftRule> shifts = new ShiftsReader(values, problems).read(fields, blanker, windDown);
+        fields.need("wind-down", "10 min", node -> quantities.time(node, Sign.POSITIVE));
+    List<ShiftRule> shifts = new ShiftsReader(blanker, windDown, values, problems).read(fields);
     int retries =
-        fields
-            .get("retries")
-            .flatMap(node -> values.whole(node, 0, Limits.RETRIES))
-            .map(Long::intValue)
-            .orElse(USUAL_RETRIES);
+        fields.or(
+            "retries",
+            USUAL_RETRIES,
+            node -> values.whole(node, 0, Limits.RETRIES).map(Long::intValue));
     fields.get("re-arm").ifPresent(this::checkRearm);
-    if (abilities.isEmpty() || adapter.isEmpty() || zone.isEmpty() || windDown.isEmpty()) {
-      return Optional.empty();
-    }
-    return Optional.of(
-        new Profile(
-            abilities.get(), adapter.get(), options, zone.get(), windDown.get(), shifts, retries));
+    return Values.all(abilities, adapter, zone, windDown)
+        ? Optional.of(
+            new Profile(
+                abilities.get(),
+                adapter.get(),
+                options,
+                zone.get(),
+                windDown.get(),
+                shifts,
+                retries))
+        : Optional.empty();
   }
 
   private Optional<Abilities> abilities(Fields fields, Optional<Blanker> blanker) {
-    ColumnReader columns = new ColumnReader(values, problems);
     Optional<String> name =
-        fields.need("instrument", "north-room").flatMap(node -> values.id(node, "north-room"));
-    Optional<Stage> stage = fields.need("stage", STAGE_EXAMPLE).flatMap(this::stage);
-    Optional<Field> field = fields.need("field", FIELD_EXAMPLE).flatMap(this::field);
+        fields.need("instrument", "north-room", node -> values.id(node, "north-room"));
+    Optional<Stage> stage = fields.need("stage", StageReader.STAGE_EXAMPLE, stages::stage);
+    Optional<Field> field = fields.need("field", StageReader.FIELD_EXAMPLE, stages::field);
     Optional<Column> column = columns.column(fields);
     Optional<CurrentMeter> meter = columns.meter(fields);
     FiltersReader.Filters filters =
-        fields
-            .get("filters")
-            .map(node -> new FiltersReader(values, problems).read(node))
-            .orElse(FiltersReader.NONE);
-    Map<Mode, ModeAbility> modes =
-        fields
-            .need("modes", ModesReader.EXAMPLE)
-            .map(node -> new ModesReader(values, problems).read(node, blanker))
-            .orElse(Map.of());
-    if (name.isEmpty()
-        || stage.isEmpty()
-        || field.isEmpty()
-        || column.isEmpty()
-        || meter.isEmpty()
-        || blanker.isEmpty()) {
-      return Optional.empty();
-    }
-    return Optional.of(
-        new Abilities(
-            name.get(),
-            stage.get(),
-            field.get(),
-            column.get(),
-            meter.get(),
-            blanker.get(),
-            filters.byName(),
-            filters.change(),
-            modes,
-            fields.get("probe").map(columns::probes).orElse(List.of())));
+        fields.or("filters", FiltersReader.NONE, new FiltersReader(values, problems)::read);
+    Optional<Map<Mode, ModeAbility>> modes =
+        fields.need("modes", ModesReader.EXAMPLE, new ModesReader(blanker, values, problems)::read);
+    return Values.all(name, stage, field, column, meter, blanker, modes)
+        ? Optional.of(
+            new Abilities(
+                name.get(),
+                stage.get(),
+                field.get(),
+                column.get(),
+                meter.get(),
+                blanker.get(),
+                filters.byName(),
+                filters.change(),
+                modes.get(),
+                fields.or("probe", List.of(), columns::probes)))
+        : Optional.empty();
   }
 
-  private Optional<Stage> stage(Node node) {
-    Optional<Fields> fields = values.fields(node, STAGE_EXAMPLE, STAGE);
-    if (fields.isEmpty()) {
-      return Optional.empty();
-    }
-    Fields found = fields.get();
-    Optional<Range> x = reach(found, "x");
-    Optional<Range> y = reach(found, "y");
-    Optional<Double> speed =
-        found
-            .need("speed", "1 mm/s")
-            .flatMap(each -> values.number(each, Dimension.SPEED, Sign.POSITIVE));
-    Optional<Double> acceleration =
-        found
-            .need("acceleration", "10 mm/s2")
-            .flatMap(each -> values.number(each, Dimension.ACCELERATION, Sign.POSITIVE));
-    Optional<Duration> settling =
-        found.need("settling", "2 s").flatMap(each -> values.time(each, Sign.NOT_NEGATIVE));
-    Optional<Double> repeatability =
-        found
-            .need("repeatability", "2 um")
-            .flatMap(each -> values.number(each, Dimension.LENGTH, Sign.NOT_NEGATIVE));
-    if (x.isEmpty()
-        || y.isEmpty()
-        || speed.isEmpty()
-        || acceleration.isEmpty()
-        || settling.isEmpty()
-        || repeatability.isEmpty()) {
-      return Optional.empty();
-    }
-    return Optional.of(
-        new Stage(
-            x.get().low().doubleValue(),
-            x.get().high().doubleValue(),
-            y.get().low().doubleValue(),
-            y.get().high().doubleValue(),
-            speed.get(),
-            acceleration.get(),
-            settling.get(),
-            repeatability.get()));
-  }
-
-  private Optional<Range> reach(Fields fields, String axis) {
-    return fields
-        .need(axis, "[-25 mm, 25 mm]")
-        .flatMap(node -> values.range(node, Dimension.LENGTH, Sign.ANY, "[-25 mm, 25 mm]"));
-  }
-
-  private Optional<Field> field(Node node) {
-    Optional<Fields> fields = values.fields(node, FIELD_EXAMPLE, FIELD);
-    Optional<Double> largest =
-        fields
-            .flatMap(found -> found.need("largest", "0.5 mm"))
-            .flatMap(found -> values.number(found, Dimension.LENGTH, Sign.POSITIVE));
-    Optional<Double> calibration =
-        fields
-            .flatMap(found -> found.need("calibration", "2 %"))
-            .flatMap(found -> values.part(found, MOST_CALIBRATION));
-    return largest.isEmpty() || calibration.isEmpty()
-        ? Optional.empty()
-        : Optional.of(new Field(largest.get(), calibration.get()));
-  }
-
-  private Optional<Blanker> blanker(Node node) {
-    Optional<Fields> fields = values.fields(node, BLANKER_EXAMPLE, BLANKER);
-    Optional<Blanker.Kind> kind =
-        fields.flatMap(found -> found.need("kind", "fast")).flatMap(this::blankerKind);
-    Optional<Node> alone = fields.flatMap(found -> found.get("alone"));
-    Optional<Duration> time = alone.flatMap(found -> values.time(found, Sign.POSITIVE));
-    return kind.isEmpty() || alone.isPresent() != time.isPresent()
-        ? Optional.empty()
-        : Optional.of(new Blanker(kind.get(), time));
-  }
-
-  private Optional<Blanker.Kind> blankerKind(Node node) {
-    Map<String, Blanker.Kind> kinds = new TreeMap<>();
-    kinds.put("fast", Blanker.Kind.FAST);
-    kinds.put("slow", Blanker.Kind.SLOW);
-    kinds.put("none", Blanker.Kind.NONE);
-    return values
-        .choice(node, kinds, List.of("fast", "slow"))
-        .filter(
-            kind -> {
-              if (kind == Blanker.Kind.NONE) {
-                problems.error(
-                    node,
-                    Keys.notRunMessage("an instrument without a blanker"),
-                    "write fast or slow when it has one; else work on it attended, without a queue");
-              }
-              return kind != Blanker.Kind.NONE;
-            });
-  }
-
-  private Map<String, String> options(Node node) {
+  private Optional<Map<String, String>> options(Node node) {
     Map<String, String> options = new LinkedHashMap<>();
-    values
-        .group(node, "options: { noise: off }")
-        .ifPresent(
-            group -> {
-              for (Node.Field option : group.fields()) {
-                values.id(option.key());
-                values
-                    .text(option.value(), "noise: off")
-                    .ifPresent(text -> options.put(option.key().text(), text));
-              }
-            });
-    return options;
+    Optional<Node.Mapping> group = values.group(node, "{ seed: 7 }");
+    for (Node.Field option : group.map(Node.Mapping::fields).orElse(List.of())) {
+      Optional<String> name = values.id(option.key(), "seed");
+      Optional<String> text = values.text(option.value(), "7");
+      if (Values.all(name, text)) {
+        options.put(name.get(), text.get());
+      }
+    }
+    return group.map(found -> options);
   }
 
   private Optional<ZoneId> zone(Node node) {
-    return values
-        .scalar(node, "Europe/Ljubljana")
-        .map(Node.Scalar::text)
-        .flatMap(
-            name -> {
-              if (ZoneId.getAvailableZoneIds().contains(name)) {
-                return Optional.of(ZoneId.of(name));
-              }
-              problems.error(
-                  node,
-                  Printed.quoted(name) + " is no time zone",
-                  Near.to(name, ZoneId.getAvailableZoneIds())
-                      .map(near -> "did you mean " + near + "?")
-                      .orElse("write for example Europe/Ljubljana"));
-              return Optional.empty();
-            });
+    Set<String> known = ZoneId.getAvailableZoneIds();
+    Optional<String> name = values.scalar(node, ZONE_EXAMPLE).map(Node.Scalar::text);
+    if (name.isPresent() && !known.contains(name.get())) {
+      problems.error(
+          node,
+          Printed.quoted(name.get()) + " is no time zone",
+          () -> Near.question(name.get(), known).orElse("write for example " + ZONE_EXAMPLE));
+    }
+    return name.filter(known::contains).map(ZoneId::of);
   }
 
   private void checkRearm(Node node) {

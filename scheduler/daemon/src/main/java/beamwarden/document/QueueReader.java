@@ -14,8 +14,8 @@ import java.util.Optional;
 /** Reads a whole queue: its samples, its recipes, its jobs and their order. */
 final class QueueReader {
   private static final Keys KEYS = Keys.of("a queue", "queue", "samples", "recipes", "jobs");
-  private static final String SAMPLE_EXAMPLE = "[{ id: sst-07, placement: …, caps: … }]";
-  private static final String JOB_EXAMPLE = "[{ id: survey, sample: sst-07, … }]";
+  private static final String SAMPLES = "[{ id: sst-07, placement: …, caps: … }]";
+  private static final String JOBS = "[{ id: survey, sample: sst-07, mode: intensity-map, … }]";
 
   private final Profile profile;
   private final Problems problems;
@@ -36,78 +36,79 @@ final class QueueReader {
       return Optional.empty();
     }
     KEYS.check(group, problems);
-    Fields fields = new Fields(group, Optional.empty(), KEYS.of(), problems);
+    Fields fields = new Fields(group, KEYS, problems);
     Optional<String> name =
-        fields.need("queue", "first-night").flatMap(node -> values.id(node, "first-night"));
+        fields.need("queue", "first-night", node -> values.id(node, "first-night"));
     Map<String, Optional<Sample>> samples = samples(fields);
-    Recipes recipes = new Recipes(fields.get("recipes"), values, problems);
-    List<Job> jobs = jobs(fields, samples, recipes);
-    recipes.warnOfUnused();
+    List<Job> jobs = jobs(fields, samples);
     return name.map(
         known ->
             new Queue(known, samples.values().stream().flatMap(Optional::stream).toList(), jobs));
   }
 
   /** Samples by id; one that has problems of its own is known and empty. */
-  private Map<String, Optional<Sample>> samples(Fields fields) {
-    Map<String, Optional<Sample>> samples = new LinkedHashMap<>();
-    Map<String, Node> first = new HashMap<>();
+  private Map<String, Optional<Sample>> samples(Fields queue) {
     SampleReader reader = new SampleReader(profile, values, problems);
-    for (Node node : items(fields, "samples", SAMPLE_EXAMPLE)) {
-      Optional<Fields> sample = reader.fields(node);
-      Optional<String> id = sample.flatMap(found -> newId(found, "sst-07", first));
-      Optional<Sample> read = sample.flatMap(found -> reader.read(found, id));
-      id.ifPresent(known -> samples.put(known, read));
+    Map<String, Optional<Sample>> samples = new LinkedHashMap<>();
+    Ids ids = new Ids("sst-07");
+    for (Node node : items(queue, "samples", SAMPLES)) {
+      Optional<Fields> fields = reader.fields(node);
+      Optional<String> id = fields.flatMap(ids::next);
+      Optional<Sample> sample = fields.flatMap(found -> reader.read(found, id));
+      id.ifPresent(known -> samples.putIfAbsent(known, sample));
     }
     return samples;
   }
 
-  private List<Job> jobs(Fields fields, Map<String, Optional<Sample>> samples, Recipes recipes) {
-    JobReader reader = new JobReader(profile, samples, values, problems);
+  private List<Job> jobs(Fields queue, Map<String, Optional<Sample>> samples) {
+    Recipes recipes = new Recipes(queue.get("recipes"), values, problems);
+    JobReader reader = new JobReader(profile, samples, recipes, problems);
     AfterOrder order = new AfterOrder(problems);
-    Map<String, Node> first = new HashMap<>();
     List<Job> jobs = new ArrayList<>();
-    for (Node node : items(fields, "jobs", JOB_EXAMPLE)) {
-      Optional<Fields> job = reader.fields(node, recipes);
-      Optional<String> id = job.flatMap(found -> newId(found, "survey", first));
-      List<Node.Scalar> after = job.map(reader::after).orElse(List.of());
+    Ids ids = new Ids("survey");
+    for (Node node : items(queue, "jobs", JOBS)) {
+      Optional<Fields> fields = reader.fields(node);
+      Optional<String> id = fields.flatMap(ids::next);
+      List<Node.Scalar> after = fields.map(reader::after).orElse(List.of());
       id.ifPresent(known -> order.add(known, after));
-      job.flatMap(found -> reader.read(found, id, after)).ifPresent(jobs::add);
+      fields.flatMap(found -> reader.read(found, id, after)).ifPresent(jobs::add);
     }
     order.check();
+    if (!jobs.isEmpty()) {
+      recipes.warnOfUnused();
+    }
     return jobs;
   }
 
-  private List<Node> items(Fields fields, String key, String example) {
-    List<Node> items =
-        fields
-            .need(key, example)
-            .flatMap(node -> values.list(node, example))
-            .map(Node.Sequence::items)
-            .orElse(List.of());
-    fields
-        .get(key)
-        .filter(node -> node instanceof Node.Sequence list && list.items().isEmpty())
-        .ifPresent(
-            node ->
-                problems.error(
-                    node, key + " is empty", "write for example " + key + ": " + example));
-    return items;
+  private List<Node> items(Fields queue, String key, String example) {
+    return queue
+        .need(key, example, node -> Optional.of(values.items(node, example)))
+        .orElse(List.of());
   }
 
-  private Optional<String> newId(Fields fields, String example, Map<String, Node> first) {
-    Optional<Node> node = fields.need("id", example);
-    Optional<String> id = node.flatMap(found -> values.id(found, example));
-    id.ifPresent(
-        known -> {
-          Node before = first.putIfAbsent(known, node.get());
-          if (before != null) {
-            problems.error(
-                node.get(),
-                "the id " + known + " is given twice, first in line " + before.mark().line(),
-                "write another id for one of the two");
-          }
-        });
-    return id;
+  /** The ids of one kind of thing, each once. */
+  private final class Ids {
+    private final String example;
+    private final Map<String, Node> first = new HashMap<>();
+
+    Ids(String example) {
+      this.example = example;
+    }
+
+    Optional<String> next(Fields fields) {
+      return fields.need(
+          "id", example, node -> values.id(node, example).filter(id -> isNew(id, node)));
+    }
+
+    private boolean isNew(String id, Node node) {
+      Node before = first.putIfAbsent(id, node);
+      if (before != null) {
+        problems.error(
+            node,
+            "the id " + id + " is given twice, first in line " + before.mark().line(),
+            "write another id for one of the two");
+      }
+      return before == null;
+    }
   }
 }

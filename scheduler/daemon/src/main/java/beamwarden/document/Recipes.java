@@ -1,7 +1,7 @@
 package beamwarden.document;
 
-import java.util.HashMap;
 import java.util.HashSet;
+import java.util.LinkedHashMap;
 import java.util.Map;
 import java.util.Optional;
 import java.util.Set;
@@ -22,52 +22,44 @@ final class Recipes {
               "also",
               "priority",
               "at-cap")
-          .notRun(JobReader.NOT_RUN);
+          .accepting(AcquisitionReader.NOT_RUN.keySet());
+  private static final String EXAMPLE = "{ mode: intensity-map, voltage: 8 kV, current: 350 pA }";
 
-  private final Map<String, Node.Field> recipes = new HashMap<>();
+  private final Map<String, Node.Scalar> names = new LinkedHashMap<>();
+  private final Map<String, Fields> recipes = new LinkedHashMap<>();
   private final Set<String> used = new HashSet<>();
+  private final Values values;
   private final Problems problems;
 
-  /** Reads the names; the values are read with the jobs that build on them. */
+  /** Reads names and keys; the values are read with the jobs that build on them. */
   Recipes(Optional<Node> node, Values values, Problems problems) {
+    this.values = values;
     this.problems = problems;
-    node.flatMap(
-            found ->
-                values.group(found, "recipes: { gentle: { mode: intensity-map, voltage: 8 kV } }"))
-        .ifPresent(
-            group -> {
-              for (Node.Field recipe : group.fields()) {
-                values.id(recipe.key());
-                recipes.put(recipe.key().text(), recipe);
-                values
-                    .group(recipe.value(), "{ mode: intensity-map, voltage: 8 kV }")
-                    .ifPresent(keys -> KEYS.checkUnknown(keys, problems));
-              }
-            });
+    node.flatMap(found -> values.group(found, "{ gentle: " + EXAMPLE + " }"))
+        .ifPresent(group -> group.fields().forEach(this::add));
+  }
+
+  private void add(Node.Field recipe) {
+    String name = recipe.key().text();
+    values.id(recipe.key(), "gentle");
+    names.put(name, recipe.key());
+    values.fields(recipe.value(), EXAMPLE, KEYS).ifPresent(fields -> recipes.put(name, fields));
   }
 
   /** The values of the recipe that a job names. */
-  Optional<Fields> of(Node.Scalar name) {
-    Node.Field recipe = recipes.get(name.text());
-    if (recipe == null) {
-      problems.error(
-          name,
-          "there is no recipe " + Printed.quoted(name.text()),
-          Near.advice(name.text(), recipes.keySet()));
-      return Optional.empty();
-    }
-    used.add(name.text());
-    return recipe.value() instanceof Node.Mapping group
-        ? Optional.of(new Fields(group, Optional.empty(), KEYS.of(), problems))
-        : Optional.empty();
+  Optional<Fields> named(Node node) {
+    Optional<String> name =
+        values.known(node, names.keySet(), "this queue has no recipe", "gentle");
+    name.ifPresent(used::add);
+    return name.map(recipes::get);
   }
 
   void warnOfUnused() {
-    recipes.forEach(
-        (name, recipe) -> {
+    names.forEach(
+        (name, key) -> {
           if (!used.contains(name)) {
             problems.warning(
-                recipe.key(),
+                key,
                 "no job builds on the recipe " + Printed.quoted(name),
                 "leave it out, or name it in a job");
           }

@@ -21,159 +21,140 @@ final class RegionReader {
   private static final Keys MOSAIC =
       Keys.of("a mosaic", "mosaic", "tile", "overlap", "centre", "turn");
   private static final Keys POINTS = Keys.of("a region of points", "points");
+  private static final Keys ANY =
+      Keys.of("a region", "centre", "size", "turn", "mosaic", "tile", "overlap", "points");
+  private static final String RASTER_EXAMPLE = "{ centre: [0 um, 0 um], size: [60 um, 60 um] }";
   private static final String POINTS_EXAMPLE = "[[0 um, 8 um]]";
+  private static final String SIZE_EXAMPLE = "[60 um, 60 um]";
   private static final String MOST_OVERLAP = "49 %";
 
   private final Abilities abilities;
   private final Values values;
+  private final Quantities quantities;
   private final Problems problems;
-  private final AreaReader areas;
 
   RegionReader(Profile profile, Values values, Problems problems) {
     this.abilities = profile.abilities();
     this.values = values;
     this.problems = problems;
-    this.areas = new AreaReader(values, problems);
+    this.quantities = new Quantities(values, problems);
   }
 
-  static String example(Mode mode) {
-    return mode == Mode.PHOTON_CORRELATION
-        ? "{ points: " + POINTS_EXAMPLE + " }"
-        : "{ centre: [0 um, 0 um], size: [60 um, 60 um] }";
-  }
-
-  /** The region of a job of that mode on that sample, when it fits the field and the stage. */
-  Optional<Region> read(Node node, Mode mode, Optional<Sample> sample) {
-    Optional<Node.Mapping> group = values.group(node, "region: " + example(mode));
-    if (group.isEmpty()) {
-      return Optional.empty();
-    }
-    Fields fields = new Fields(group.get(), Optional.empty(), "a region", problems);
-    if (fields.has("line")) {
-      problems.error(
-          node, Keys.notRunMessage("a line"), "write a rectangle with one row of pixels");
-      return Optional.empty();
-    }
-    boolean points = fields.has("points");
-    if (points != (mode == Mode.PHOTON_CORRELATION)) {
-      problems.error(
-          node,
-          points
-              ? mode.text() + " does not rest at points"
-              : mode.text() + " rests at points and scans no raster",
-          "write region: " + example(mode));
+  /** The region of a job of that mode on that sample. */
+  Optional<Region> read(Fields job, Mode mode, Optional<Sample> sample) {
+    boolean points = mode == Mode.PHOTON_CORRELATION;
+    String example = points ? "{ points: " + POINTS_EXAMPLE + " }" : RASTER_EXAMPLE;
+    Optional<Node.Mapping> group = job.need("region", example, node -> values.group(node, example));
+    if (group.isEmpty() || !suits(group.get(), mode, points, example)) {
       return Optional.empty();
     }
     if (points) {
-      return points(fields, sample);
+      return points(checked(group.get(), POINTS), sample);
     }
-    return fields.has("mosaic") ? mosaic(fields, mode, sample) : rectangle(fields, mode, sample);
+    return ANY.attempted(group.get(), "mosaic") || ANY.attempted(group.get(), "tile")
+        ? mosaic(checked(group.get(), MOSAIC), mode, sample)
+        : rectangle(checked(group.get(), RECTANGLE), mode, sample);
+  }
+
+  /** Whether a region is of the kind that a mode needs. */
+  private boolean suits(Node.Mapping group, Mode mode, boolean needsPoints, String example) {
+    Optional<Node.Scalar> line = new Fields(group, ANY, problems).key("line");
+    boolean hasPoints = ANY.attempted(group, "points");
+    if (line.isPresent()) {
+      problems.error(
+          line.get(), Keys.notRunMessage("a line"), "write a rectangle with one row of pixels");
+    } else if (needsPoints != hasPoints) {
+      problems.error(
+          group,
+          mode.text()
+              + (needsPoints
+                  ? " rests at points, and this region has none"
+                  : " scans a raster, and this region has points"),
+          "write for example region: " + example);
+    }
+    return line.isEmpty() && needsPoints == hasPoints;
+  }
+
+  private Fields checked(Node.Mapping group, Keys keys) {
+    keys.check(group, problems);
+    return new Fields(group, keys, problems);
   }
 
   private Optional<Region> rectangle(Fields fields, Mode mode, Optional<Sample> sample) {
-    RECTANGLE.check(fields.group(), problems);
-    Optional<Rectangle> rectangle = areas.rectangle(fields);
-    boolean fits = fitsField(fields, "size", mode);
-    rectangle
-        .map(Rectangle::centre)
-        .ifPresent(
-            centre -> checkReach(fields.get("centre").orElseThrow(), "its centre", centre, sample));
-    return rectangle.filter(found -> fits).map(found -> found);
+    Optional<Rectangle> rectangle = new AreaReader(values, problems).rectangle(fields);
+    rectangle.ifPresent(
+        found -> {
+          checkField(fields, "size", found, mode);
+          checkReach(fields.get("centre").get(), "the centre", found.centre(), sample);
+        });
+    return rectangle.map(found -> found);
   }
 
   private Optional<Region> mosaic(Fields fields, Mode mode, Optional<Sample> sample) {
-    MOSAIC.check(fields.group(), problems);
-    Optional<List<Long>> tiles =
-        fields
-            .get("mosaic")
-            .flatMap(node -> values.pair(node, "[3, 2]"))
-            .flatMap(
-                pair -> {
-                  Optional<Long> columns = values.whole(pair.get(0), 1, Limits.TILES);
-                  Optional<Long> rows = values.whole(pair.get(1), 1, Limits.TILES);
-                  return columns.isEmpty() || rows.isEmpty()
-                      ? Optional.empty()
-                      : Optional.of(List.of(columns.get(), rows.get()));
-                });
-    Optional<List<Length>> tile = areas.size(fields, "tile");
-    boolean fits = fitsField(fields, "tile", mode);
-    Optional<Double> overlap =
-        fields.has("overlap")
-            ? fields.get("overlap").flatMap(node -> values.part(node, MOST_OVERLAP))
-            : Optional.of(0.0);
-    Optional<Point> centre = areas.centre(fields);
-    Optional<Double> turn = areas.turn(fields);
-    if (tiles.isEmpty()
-        || tile.isEmpty()
-        || overlap.isEmpty()
-        || centre.isEmpty()
-        || turn.isEmpty()) {
+    Optional<List<Integer>> tiles = fields.need("mosaic", "[3, 2]", this::tiles);
+    Optional<List<Length>> size = fields.need("tile", SIZE_EXAMPLE, quantities::size);
+    Optional<Point> centre = fields.need("centre", "[0 um, 0 um]", quantities::point);
+    double overlap = fields.or("overlap", 0.0, node -> quantities.part(node, MOST_OVERLAP));
+    double turn = fields.or("turn", 0.0, quantities::turn);
+    if (!Values.all(tiles, size, centre)) {
       return Optional.empty();
     }
     Mosaic mosaic =
         new Mosaic(
-            tiles.get().get(0).intValue(),
-            tiles.get().get(1).intValue(),
-            tile.get().get(0).metres(),
-            tile.get().get(1).metres(),
-            overlap.get(),
+            tiles.get().get(0),
+            tiles.get().get(1),
+            size.get().get(0).metres(),
+            size.get().get(1).metres(),
+            overlap,
             centre.get(),
-            turn.get());
-    mosaic.tiles().stream()
+            turn);
+    List<Rectangle> made = mosaic.tiles();
+    checkField(fields, "tile", made.get(0), mode);
+    made.stream()
         .map(Rectangle::centre)
         .filter(place -> !reached(place, sample))
         .findFirst()
-        .ifPresent(
-            place -> checkReach(fields.get("mosaic").orElseThrow(), "a tile", place, sample));
-    return fits ? Optional.of(mosaic) : Optional.empty();
+        .ifPresent(place -> checkReach(fields.get("mosaic").get(), "a tile", place, sample));
+    return Optional.of(mosaic);
+  }
+
+  private Optional<List<Integer>> tiles(Node node) {
+    Optional<List<Node>> pair = values.pair(node, "[3, 2]");
+    Optional<Long> columns = pair.flatMap(items -> values.whole(items.get(0), 1, Limits.TILES));
+    Optional<Long> rows = pair.flatMap(items -> values.whole(items.get(1), 1, Limits.TILES));
+    return columns.flatMap(
+        width -> rows.map(height -> List.of(width.intValue(), height.intValue())));
   }
 
   private Optional<Region> points(Fields fields, Optional<Sample> sample) {
-    POINTS.check(fields.group(), problems);
-    Optional<Node.Sequence> list =
-        fields.get("points").flatMap(node -> values.list(node, POINTS_EXAMPLE));
-    if (list.isEmpty()) {
-      return Optional.empty();
-    }
     List<Point> places = new ArrayList<>();
-    for (Node item : list.get().items()) {
-      values
-          .point(item)
-          .ifPresent(
-              place -> {
-                checkReach(item, "this point", place, sample);
-                places.add(place);
-              });
-    }
-    if (list.get().items().isEmpty()) {
-      problems.error(list.get(), "points is empty", "write for example points: " + POINTS_EXAMPLE);
+    List<Node> items =
+        fields.get("points").map(node -> values.items(node, POINTS_EXAMPLE)).orElse(List.of());
+    for (Node item : items) {
+      Optional<Point> place = quantities.point(item);
+      place.ifPresent(found -> checkReach(item, "this point", found, sample));
+      place.ifPresent(places::add);
     }
     return places.isEmpty() ? Optional.empty() : Optional.of(new Points(places));
   }
 
-  /** Whether both sides are within the field of the instrument and of the mode. */
-  private boolean fitsField(Fields fields, String key, Mode mode) {
+  /** Reports a side of a raster that is longer than the field of the instrument or the mode. */
+  private void checkField(Fields fields, String key, Rectangle raster, Mode mode) {
     double largest = abilities.field().largestMetres();
-    double modes = abilities.modes().get(mode).fieldMetres().orElse(largest);
-    Length limit = new Length(Math.min(largest, modes));
-    boolean fits = true;
-    if (fields.get(key).orElse(null) instanceof Node.Sequence sides) {
-      for (Node side : sides.items()) {
-        fits &= fitsField(side, limit, mode);
-      }
-    }
-    return fits;
+    double ofMode = abilities.modes().get(mode).fieldMetres().orElse(largest);
+    Length limit = new Length(Math.min(largest, ofMode));
+    List<Node> sides = ((Node.Sequence) fields.get(key).get()).items();
+    checkSide(sides.get(0), raster.widthMetres(), limit, mode);
+    checkSide(sides.get(1), raster.heightMetres(), limit, mode);
   }
 
-  private boolean fitsField(Node side, Length limit, Mode mode) {
-    Optional<Length> length = new Values(new Problems("")).length(side, Values.Sign.POSITIVE);
-    boolean fits = length.isEmpty() || length.get().compareTo(limit) <= 0;
-    if (!fits) {
+  private void checkSide(Node node, double metres, Length limit, Mode mode) {
+    if (metres > limit.metres()) {
       problems.error(
-          side,
-          side.name()
+          node,
+          node.name()
               + " is "
-              + Values.written(side)
+              + Values.written(node)
               + ", more than the field of "
               + mode.text()
               + " on "
@@ -182,7 +163,6 @@ final class RegionReader {
               + limit,
           "write at most " + limit + ", or a mosaic of smaller tiles");
     }
-    return fits;
   }
 
   private boolean reached(Point place, Optional<Sample> sample) {
@@ -200,9 +180,9 @@ final class RegionReader {
         what
             + " lies at "
             + written(there.xMetres(), there.yMetres())
-            + " of the stage of "
+            + " of the stage, and the stage of "
             + abilities.instrument()
-            + ", which reaches from "
+            + " reaches from "
             + written(stage.leftMetres(), stage.bottomMetres())
             + " to "
             + written(stage.rightMetres(), stage.topMetres()),

@@ -2,7 +2,8 @@ package beamwarden.document;
 
 import beamwarden.beam.Placement;
 import beamwarden.beam.Point;
-import beamwarden.document.Values.Sign;
+import beamwarden.document.Quantities.Sign;
+import beamwarden.physics.Formula;
 import beamwarden.profile.Profile;
 import beamwarden.quantity.Dimension;
 import beamwarden.quantity.Length;
@@ -10,7 +11,6 @@ import beamwarden.queue.Area;
 import beamwarden.queue.Cap;
 import beamwarden.queue.Material;
 import beamwarden.queue.Sample;
-import java.util.ArrayList;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
@@ -30,11 +30,15 @@ final class SampleReader {
       "{ x: 12.4 mm, y: -3.1 mm, turn: 0 deg, uncertainty: 3 um }";
 
   private final Values values;
+  private final Quantities quantities;
+  private final Problems problems;
   private final AreaReader areas;
   private final CapReader caps;
 
   SampleReader(Profile profile, Values values, Problems problems) {
     this.values = values;
+    this.problems = problems;
+    this.quantities = new Quantities(values, problems);
     this.areas = new AreaReader(values, problems);
     this.caps = new CapReader(profile, values, problems);
   }
@@ -44,54 +48,60 @@ final class SampleReader {
   }
 
   Optional<Sample> read(Fields fields, Optional<String> id) {
-    Optional<String> label =
-        fields.get("label").map(node -> values.text(node, "polished thin section")).orElse(id);
-    Optional<Node> materialNode = fields.get("material");
-    Optional<Material> material = materialNode.flatMap(this::material);
-    Optional<Placement> placement =
-        fields.need("placement", PLACEMENT_EXAMPLE).flatMap(this::placement);
+    Optional<Node> material = fields.get("material");
+    Optional<Placement> placement = fields.need("placement", PLACEMENT_EXAMPLE, this::placement);
     List<Area> known = fields.get("areas").map(areas::read).orElse(List.of());
-    List<Cap> limits = caps.read(fields, known, materialNode.isPresent());
-    return id.isEmpty() || placement.isEmpty()
-        ? Optional.empty()
-        : Optional.of(
-            new Sample(id.get(), label.orElse(id.get()), material, placement.get(), known, limits));
+    List<Cap> limits = caps.read(fields, known, material.isPresent());
+    String label =
+        fields.or("label", id.orElse(""), node -> values.text(node, "polished thin section"));
+    Optional<Material> made = material.flatMap(this::material);
+    return Values.all(id, placement)
+        ? Optional.of(new Sample(id.get(), label, made, placement.get(), known, limits))
+        : Optional.empty();
   }
 
   private Optional<Material> material(Node node) {
-    Optional<Fields> fields = values.fields(node, "material: " + MATERIAL_EXAMPLE, MATERIAL);
+    Optional<Fields> fields = values.fields(node, MATERIAL_EXAMPLE, MATERIAL);
     Optional<String> formula =
-        fields
-            .flatMap(found -> found.need("formula", "SiO2"))
-            .flatMap(found -> values.text(found, "SiO2"));
+        fields.flatMap(found -> found.need("formula", "SiO2", this::formula));
     Optional<Double> density =
-        fields
-            .flatMap(found -> found.need("density", "2.65 g/cm3"))
-            .flatMap(found -> values.number(found, Dimension.DENSITY, Sign.POSITIVE));
-    return formula.isEmpty() || density.isEmpty()
-        ? Optional.empty()
-        : Optional.of(new Material(formula.get(), density.get()));
+        fields.flatMap(
+            found ->
+                found.need(
+                    "density",
+                    Dimension.DENSITY.example(),
+                    each -> quantities.number(each, Dimension.DENSITY, Sign.POSITIVE)));
+    return Values.all(formula, density)
+        ? Optional.of(new Material(formula.get(), density.get()))
+        : Optional.empty();
+  }
+
+  private Optional<String> formula(Node node) {
+    Optional<String> text = values.text(node, "SiO2");
+    try {
+      text.ifPresent(Formula::parse);
+      return text;
+    } catch (IllegalArgumentException refused) {
+      problems.error(
+          node, Printed.line(refused.getMessage()), "write a formula such as SiO2 or Ca(OH)2");
+      return Optional.empty();
+    }
   }
 
   private Optional<Placement> placement(Node node) {
-    Optional<Fields> fields = values.fields(node, "placement: " + PLACEMENT_EXAMPLE, PLACEMENT);
-    if (fields.isEmpty()) {
+    Optional<Fields> fields = values.fields(node, PLACEMENT_EXAMPLE, PLACEMENT);
+    Optional<Length> x = length(fields, "x", "12.4 mm", Sign.ANY);
+    Optional<Length> y = length(fields, "y", "-3.1 mm", Sign.ANY);
+    Optional<Length> uncertainty = length(fields, "uncertainty", "3 um", Sign.NOT_NEGATIVE);
+    Optional<Double> turn = fields.map(found -> found.or("turn", 0.0, quantities::turn));
+    if (!Values.all(x, y, uncertainty, turn)) {
       return Optional.empty();
     }
-    List<Optional<Length>> lengths = new ArrayList<>();
-    lengths.add(fields.get().need("x", "12.4 mm").flatMap(x -> values.length(x, Sign.ANY)));
-    lengths.add(fields.get().need("y", "-3.1 mm").flatMap(y -> values.length(y, Sign.ANY)));
-    lengths.add(
-        fields
-            .get()
-            .need("uncertainty", "3 um")
-            .flatMap(found -> values.length(found, Sign.NOT_NEGATIVE)));
-    Optional<Double> turn = areas.turn(fields.get());
-    if (turn.isEmpty() || lengths.stream().anyMatch(Optional::isEmpty)) {
-      return Optional.empty();
-    }
-    List<Double> metres = lengths.stream().map(length -> length.orElseThrow().metres()).toList();
-    return Optional.of(
-        new Placement(new Point(metres.get(0), metres.get(1)), turn.get(), metres.get(2)));
+    Point origin = new Point(x.get().metres(), y.get().metres());
+    return Optional.of(new Placement(origin, turn.get(), uncertainty.get().metres()));
+  }
+
+  private Optional<Length> length(Optional<Fields> fields, String key, String example, Sign sign) {
+    return fields.flatMap(found -> found.need(key, example, node -> quantities.length(node, sign)));
   }
 }

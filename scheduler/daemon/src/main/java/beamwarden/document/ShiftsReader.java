@@ -1,26 +1,28 @@
 package beamwarden.document;
 
-import beamwarden.document.Values.Sign;
+import beamwarden.document.Quantities.Sign;
 import beamwarden.instrument.Blanker;
+import beamwarden.shift.ShiftCalendar;
 import beamwarden.shift.ShiftRule;
 import beamwarden.shift.ShiftRule.Closed;
 import beamwarden.shift.ShiftRule.Hours;
 import beamwarden.shift.ShiftRule.OnDate;
 import beamwarden.shift.ShiftRule.Weekly;
-import java.time.DateTimeException;
 import java.time.DayOfWeek;
 import java.time.Duration;
 import java.time.LocalDate;
 import java.time.LocalTime;
+import java.time.ZoneOffset;
 import java.util.ArrayList;
 import java.util.EnumSet;
-import java.util.HashMap;
 import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Locale;
 import java.util.Map;
 import java.util.Optional;
 import java.util.Set;
+import java.util.function.Predicate;
+import java.util.stream.Stream;
 
 /** Reads the rules from which shifts are made. */
 final class ShiftsReader {
@@ -37,171 +39,138 @@ final class ShiftsReader {
           "beam-on",
           "closed",
           "because");
+  private static final Keys CLOSED = Keys.of("a closed day", "date", "closed", "because");
   private static final String EXAMPLE =
       "{ weekly: [mon, tue, wed, thu, fri], opens: 19:00, closes: 07:00, unattended: true }";
-  private static final Duration DAY = Duration.ofDays(1);
+  private static final Map<String, DayOfWeek> DAYS = new LinkedHashMap<>();
 
-  private final Values values;
-  private final Problems problems;
-  private final Map<String, DayOfWeek> days = new LinkedHashMap<>();
-  private final Map<LocalDate, Node> dates = new HashMap<>();
-
-  ShiftsReader(Values values, Problems problems) {
-    this.values = values;
-    this.problems = problems;
+  static {
     for (DayOfWeek day : DayOfWeek.values()) {
-      days.put(day.name().substring(0, 3).toLowerCase(Locale.ROOT), day);
+      DAYS.put(day.name().substring(0, 3).toLowerCase(Locale.ROOT), day);
     }
   }
 
-  List<ShiftRule> read(Fields profile, Optional<Blanker> blanker, Optional<Duration> windDown) {
-    List<ShiftRule> rules = new ArrayList<>();
-    Optional<Node.Sequence> list =
+  private final Optional<Blanker> blanker;
+  private final Optional<Duration> windDown;
+  private final Values values;
+  private final Quantities quantities;
+  private final LabTime times;
+  private final Problems problems;
+
+  /** Reads shifts of an instrument with that blanker and usual wind-down. */
+  ShiftsReader(
+      Optional<Blanker> blanker, Optional<Duration> windDown, Values values, Problems problems) {
+    this.blanker = blanker;
+    this.windDown = windDown;
+    this.values = values;
+    this.problems = problems;
+    this.quantities = new Quantities(values, problems);
+    this.times = new LabTime(ZoneOffset.UTC, values, problems);
+  }
+
+  List<ShiftRule> read(Fields profile) {
+    String example = "[" + EXAMPLE + "]";
+    List<Node> items =
         profile
-            .need("shifts", "[" + EXAMPLE + "]")
-            .flatMap(node -> values.list(node, "[" + EXAMPLE + "]"));
-    for (Node node : list.map(Node.Sequence::items).orElse(List.of())) {
-      values
-          .fields(node, EXAMPLE, OPEN)
-          .flatMap(fields -> rule(fields, blanker, windDown))
-          .ifPresent(rules::add);
+            .need("shifts", example, node -> Optional.of(values.items(node, example)))
+            .orElse(List.of());
+    List<ShiftRule> rules = new ArrayList<>();
+    if (items.size() > Limits.SHIFTS) {
+      problems.error(
+          items.get(Limits.SHIFTS),
+          "there are " + items.size() + " shifts, more than the " + Limits.SHIFTS + " of a profile",
+          "leave out those that are over");
+      return rules;
     }
-    list.filter(found -> found.items().isEmpty())
-        .ifPresent(
-            found ->
-                problems.error(
-                    found, "shifts is empty", "write for example shifts: [" + EXAMPLE + "]"));
+    for (Node node : items) {
+      Optional<ShiftRule> rule = rule(node);
+      rule.filter(found -> agrees(rules, found, node)).ifPresent(rules::add);
+    }
     return rules;
   }
 
-  private Optional<ShiftRule> rule(
-      Fields fields, Optional<Blanker> blanker, Optional<Duration> windDown) {
-    if (fields.has("weekly") == fields.has("date")) {
-      problems.error(
-          fields.group(),
-          fields.has("date") ? "a shift has both weekly and date" : "a shift has no day",
-          "write weekly: [mon, tue] or date: 2031-03-08");
-      return Optional.empty();
+  /** Whether a rule can stand beside those before it: the calendar says what contradicts. */
+  private boolean agrees(List<ShiftRule> before, ShiftRule rule, Node node) {
+    try {
+      List<ShiftRule> all = Stream.concat(before.stream(), Stream.of(rule)).toList();
+      new ShiftCalendar(ZoneOffset.UTC, all, windDown.orElse(Duration.ZERO));
+      return true;
+    } catch (IllegalArgumentException contradiction) {
+      String[] parts = contradiction.getMessage().split(": ", 2);
+      problems.error(node, parts[0], parts.length > 1 ? parts[1] : "change one of the rules");
+      return false;
     }
-    Optional<LocalDate> date = fields.get("date").flatMap(this::date);
-    if (fields.get("closed").flatMap(values::flag).orElse(false)) {
-      return closed(fields, date);
-    }
-    Optional<Hours> hours = hours(fields, blanker, windDown);
-    if (fields.has("date")) {
-      return date.isEmpty() || hours.isEmpty()
-          ? Optional.empty()
-          : Optional.of(new OnDate(date.get(), hours.get()));
-    }
-    Optional<Set<DayOfWeek>> weekly = fields.get("weekly").flatMap(this::weekly);
-    return weekly.isEmpty() || hours.isEmpty()
-        ? Optional.empty()
-        : Optional.of(new Weekly(weekly.get(), hours.get()));
   }
 
-  private Optional<ShiftRule> closed(Fields fields, Optional<LocalDate> date) {
-    for (String key : List.of("weekly", "opens", "closes", "unattended")) {
-      fields
-          .key(key)
-          .ifPresent(
-              node -> problems.error(node, "a closed day has no " + key, "write date and because"));
+  private Optional<ShiftRule> rule(Node node) {
+    Optional<Node.Mapping> group = values.group(node, EXAMPLE);
+    if (group.isEmpty()) {
+      return Optional.empty();
     }
-    String because =
-        fields.get("because").flatMap(node -> values.text(node, "service visit")).orElse("");
-    return date.map(found -> new Closed(found, because));
+    Fields any = new Fields(group.get(), OPEN, problems);
+    boolean closed =
+        any.get("closed")
+            .filter(flag -> flag instanceof Node.Scalar text && text.text().equals("true"))
+            .isPresent();
+    Keys keys = closed ? CLOSED : OPEN;
+    keys.check(group.get(), problems);
+    Fields fields = new Fields(group.get(), keys, problems);
+    return closed ? closed(fields) : open(fields);
+  }
+
+  private Optional<ShiftRule> closed(Fields fields) {
+    String because = fields.or("because", "", node -> values.text(node, "service visit"));
+    return fields.need("date", "2031-03-08", times::date).map(date -> new Closed(date, because));
+  }
+
+  private Optional<ShiftRule> open(Fields fields) {
+    Optional<Hours> hours = hours(fields);
+    fields.get("closed").ifPresent(values::flag);
+    if (fields.has("weekly") == fields.has("date")) {
+      if (fields.has("date") || !OPEN.attempted(fields.group(), "weekly")) {
+        problems.error(
+            fields.group(),
+            fields.has("date") ? "a shift has both weekly and date" : "a shift has no day",
+            "write weekly: [mon, tue] or date: 2031-03-08");
+      }
+      return Optional.empty();
+    }
+    if (fields.has("date")) {
+      Optional<LocalDate> date = fields.get("date").flatMap(times::date);
+      return date.flatMap(day -> hours.map(found -> new OnDate(day, found)));
+    }
+    Optional<Set<DayOfWeek>> days = fields.get("weekly").flatMap(this::weekly);
+    return days.flatMap(found -> hours.map(each -> new Weekly(found, each)));
   }
 
   private Optional<Set<DayOfWeek>> weekly(Node node) {
-    Set<DayOfWeek> found = EnumSet.noneOf(DayOfWeek.class);
-    Optional<Node.Sequence> list = values.list(node, "[mon, tue]");
-    for (Node item : list.map(Node.Sequence::items).orElse(List.of())) {
-      values.choice(item, days, List.copyOf(days.keySet())).ifPresent(found::add);
+    Set<DayOfWeek> days = EnumSet.noneOf(DayOfWeek.class);
+    for (Node item : values.items(node, "[mon, tue]")) {
+      values.choice(item, DAYS, List.copyOf(DAYS.keySet())).ifPresent(days::add);
     }
-    if (list.isPresent() && list.get().items().isEmpty()) {
-      problems.error(node, "weekly is empty", "write for example weekly: [mon, tue]");
-    }
-    return found.isEmpty() ? Optional.empty() : Optional.of(found);
+    return Optional.of(days).filter(Predicate.not(Set::isEmpty));
   }
 
-  private Optional<LocalDate> date(Node node) {
-    Optional<LocalDate> date =
-        values
-            .scalar(node, "2031-03-08")
-            .flatMap(
-                scalar -> {
-                  try {
-                    return Optional.of(LocalDate.parse(scalar.text()));
-                  } catch (DateTimeException broken) {
-                    problems.error(
-                        node,
-                        Values.written(scalar) + " is no date",
-                        "write year, month and day, such as 2031-03-08");
-                    return Optional.empty();
-                  }
-                });
-    Node before = date.map(found -> dates.putIfAbsent(found, node)).orElse(null);
-    if (before != null) {
+  private Optional<Hours> hours(Fields fields) {
+    Optional<LocalTime> opens = fields.need("opens", "19:00", times::clock);
+    Optional<LocalTime> closes = fields.need("closes", "07:00", times::clock);
+    Optional<LocalTime> latestStart = fields.get("latest-start").flatMap(times::clock);
+    Optional<Duration> own = time(fields, "wind-down");
+    Optional<Duration> beamOn = time(fields, "beam-on");
+    boolean unattended = fields.or("unattended", false, values::flag);
+    if (unattended && blanker.isPresent() && blanker.get().alone().isEmpty()) {
       problems.error(
-          node,
-          "the date " + date.get() + " is given twice, first in line " + before.mark().line(),
-          "keep one of the two");
+          fields.get("unattended").orElse(fields.group()),
+          "nothing turns the beam off without the daemon, so that no shift may be unattended",
+          "write how quickly the blanker works alone, such as alone: 0.1 ms, or"
+              + " unattended: false");
     }
-    return date;
+    return Values.all(opens, closes)
+        ? Optional.of(new Hours(opens.get(), closes.get(), unattended, own, latestStart, beamOn))
+        : Optional.empty();
   }
 
-  private Optional<Hours> hours(
-      Fields fields, Optional<Blanker> blanker, Optional<Duration> usualWindDown) {
-    Optional<LocalTime> opens = fields.need("opens", "19:00").flatMap(this::clock);
-    Optional<LocalTime> closes = fields.need("closes", "07:00").flatMap(this::clock);
-    Optional<Duration> windDown =
-        fields.get("wind-down").flatMap(node -> values.time(node, Sign.POSITIVE));
-    Optional<LocalTime> latestStart = fields.get("latest-start").flatMap(this::clock);
-    Optional<Duration> beamOn =
-        fields.get("beam-on").flatMap(node -> values.time(node, Sign.POSITIVE));
-    Optional<Node> unattended = fields.get("unattended");
-    boolean alone = unattended.flatMap(values::flag).orElse(false);
-    if (alone && blanker.isPresent() && blanker.get().alone().isEmpty()) {
-      problems.error(
-          unattended.get(),
-          "nothing turns the beam off without the daemon, so no shift can be unattended",
-          "write how quickly the blanker works alone, such as alone: 0.1 ms, or unattended: false");
-    }
-    if (opens.isEmpty() || closes.isEmpty()) {
-      return Optional.empty();
-    }
-    checkWindDown(fields, opens.get(), closes.get(), windDown.or(() -> usualWindDown));
-    return Optional.of(new Hours(opens.get(), closes.get(), alone, windDown, latestStart, beamOn));
-  }
-
-  private void checkWindDown(
-      Fields fields, LocalTime opens, LocalTime closes, Optional<Duration> windDown) {
-    Duration length = Duration.between(opens, closes);
-    Duration open = length.isNegative() || length.isZero() ? length.plus(DAY) : length;
-    if (windDown.isPresent() && windDown.get().compareTo(open) >= 0) {
-      problems.error(
-          fields.get("wind-down").orElse(fields.group()),
-          "a wind-down of "
-              + Printed.time(windDown.get())
-              + " leaves nothing of a shift of "
-              + Printed.time(open),
-          "write a shorter wind-down or a longer shift");
-    }
-  }
-
-  private Optional<LocalTime> clock(Node node) {
-    return values
-        .scalar(node, "19:00")
-        .flatMap(
-            scalar -> {
-              try {
-                return Optional.of(LocalTime.parse(scalar.text()));
-              } catch (DateTimeException broken) {
-                problems.error(
-                    node,
-                    node.name() + " is " + Values.written(scalar) + ", which is no time of day",
-                    "write hours and minutes, such as 19:00 or 07:00");
-                return Optional.empty();
-              }
-            });
+  private Optional<Duration> time(Fields fields, String key) {
+    return fields.get(key).flatMap(node -> quantities.time(node, Sign.POSITIVE));
   }
 }

@@ -16,6 +16,7 @@ import org.snakeyaml.engine.v2.api.LoadSettings;
 import org.snakeyaml.engine.v2.api.lowlevel.Parse;
 import org.snakeyaml.engine.v2.common.Anchor;
 import org.snakeyaml.engine.v2.events.AliasEvent;
+import org.snakeyaml.engine.v2.events.CollectionStartEvent;
 import org.snakeyaml.engine.v2.events.Event;
 import org.snakeyaml.engine.v2.events.NodeEvent;
 import org.snakeyaml.engine.v2.events.ScalarEvent;
@@ -57,7 +58,7 @@ final class TreeReader {
 
   private TreeReader(String text, Problems problems) {
     this.problems = problems;
-    LoadSettings settings = LoadSettings.builder().setLabel(problems.file()).build();
+    LoadSettings settings = LoadSettings.builder().build();
     this.events = new Parse(settings).parseString(text).iterator();
   }
 
@@ -74,15 +75,20 @@ final class TreeReader {
               .or(broken::getContextMark)
               .map(place -> new Mark(place.getLine() + 1, place.getColumn() + 1))
               .orElse(BEGINNING);
-      problems.error(mark, unreadable(broken.getProblem()), BROKEN_ADVICE);
+      problems.error(mark, unreadable(broken.getProblem()), advice(broken.getProblem()));
     } catch (YamlEngineException broken) {
       problems.error(BEGINNING, unreadable(broken.getMessage()), BROKEN_ADVICE);
     }
     return Optional.empty();
   }
 
+  private static String advice(String why) {
+    return why != null && why.contains("TAB") ? "indent with blanks, not with tabs" : BROKEN_ADVICE;
+  }
+
   private static String unreadable(String why) {
-    String known = Optional.ofNullable(why).orElse("unknown").replaceAll(" ?\\(.*\\)\\.?", "");
+    String known =
+        Optional.ofNullable(why).orElse("unknown").replaceAll("\\.? ?\\([^)]*\\)\\.?", "");
     return "the text is neither YAML nor JSON: " + Printed.quoted(known);
   }
 
@@ -108,14 +114,9 @@ final class TreeReader {
     return event.getEventId() == id;
   }
 
-  private Node node(Event event, Place path, int depth) {
+  private Node node(Event event, Place place, int depth) {
     Mark mark = mark(event);
-    if (++nodes > Limits.NODES) {
-      throw new Unreadable(
-          mark,
-          "the document has more than " + Limits.NODES + " values",
-          "share its jobs out to several queues");
-    }
+    count(1, mark);
     if (depth > Limits.NESTING) {
       throw new Unreadable(
           mark,
@@ -126,24 +127,43 @@ final class TreeReader {
       return aliased(alias, mark);
     }
     int before = nodes - 1;
-    Node node = made(event, path, mark, depth);
+    Node node = made(event, place, mark, depth);
+    if (tagged(event)) {
+      problems.error(node, "a tag with ! has no meaning here", "leave the tag out");
+    }
     NodeEvent own = (NodeEvent) event;
     own.getAnchor().ifPresent(name -> anchors.put(name, new Anchored(node, nodes - before)));
     return node;
   }
 
-  private Node made(Event event, Place path, Mark mark, int depth) {
+  private void count(int more, Mark mark) {
+    nodes += more;
+    if (nodes > Limits.NODES) {
+      throw new Unreadable(
+          mark,
+          "the document has more than " + Limits.NODES + " values",
+          "share its jobs out to several queues");
+    }
+  }
+
+  private Node made(Event event, Place place, Mark mark, int depth) {
     return switch (event.getEventId()) {
-      case Scalar -> scalar((ScalarEvent) event, path, mark);
-      case SequenceStart -> sequence(path, mark, depth);
-      case MappingStart -> mapping(path, mark, depth);
+      case Scalar -> scalar((ScalarEvent) event, place, mark);
+      case SequenceStart -> sequence(place, mark, depth);
+      case MappingStart -> mapping(place, mark, depth);
       default ->
           throw new Unreadable(mark, "a value is expected here, and there is none", BROKEN_ADVICE);
     };
   }
 
-  private Scalar scalar(ScalarEvent event, Place path, Mark mark) {
-    return new Scalar(mark, path, event.getValue(), event.isPlain());
+  private static boolean tagged(Event event) {
+    return event instanceof ScalarEvent scalar
+        ? scalar.getTag().isPresent()
+        : event instanceof CollectionStartEvent collection && collection.getTag().isPresent();
+  }
+
+  private Scalar scalar(ScalarEvent event, Place place, Mark mark) {
+    return new Scalar(mark, place, event.getValue(), event.isPlain());
   }
 
   private Node aliased(AliasEvent alias, Mark mark) {
@@ -161,32 +181,32 @@ final class TreeReader {
           "the alias *" + name + " stands for nothing that ends before it",
           "write the value itself, or mark it with &" + name + " further up");
     }
-    nodes += meant.nodes() - 1;
+    count(meant.nodes() - 1, mark);
     return meant.node();
   }
 
-  private Sequence sequence(Place path, Mark mark, int depth) {
+  private Sequence sequence(Place place, Mark mark, int depth) {
     List<Node> items = new ArrayList<>();
     for (Event next = events.next(); !comes(next, Event.ID.SequenceEnd); next = events.next()) {
-      items.add(node(next, path.item(items.size()), depth + 1));
+      items.add(node(next, place.item(items.size()), depth + 1));
     }
-    return new Sequence(mark, path, List.copyOf(items));
+    return new Sequence(mark, place, List.copyOf(items));
   }
 
-  private Mapping mapping(Place path, Mark mark, int depth) {
+  private Mapping mapping(Place place, Mark mark, int depth) {
     Map<String, Field> fields = new LinkedHashMap<>();
     for (Event next = events.next(); !comes(next, Event.ID.MappingEnd); next = events.next()) {
-      Node key = node(next, path, depth + 1);
+      Node key = node(next, place, depth + 1);
       if (!(key instanceof Scalar named)) {
         throw new Unreadable(
             key.mark(), "a key is expected here, not " + key.kind(), BROKEN_ADVICE);
       }
-      Place place = path.key(named.text());
-      Node value = node(events.next(), place, depth + 1);
-      Scalar placed = new Scalar(named.mark(), place, named.text(), named.plain());
+      Place within = place.key(named.text());
+      Node value = node(events.next(), within, depth + 1);
+      Scalar placed = new Scalar(named.mark(), within, named.text(), named.plain());
       add(fields, new Field(placed, value));
     }
-    return new Mapping(mark, path, List.copyOf(fields.values()));
+    return new Mapping(mark, place, List.copyOf(fields.values()));
   }
 
   private void add(Map<String, Field> fields, Field field) {

@@ -1,27 +1,18 @@
 package beamwarden.document;
 
-import beamwarden.beam.Point;
-import beamwarden.quantity.Charge;
-import beamwarden.quantity.Current;
-import beamwarden.quantity.Dimension;
-import beamwarden.quantity.Fluence;
-import beamwarden.quantity.Length;
-import beamwarden.quantity.QuantityFormatException;
-import beamwarden.quantity.QuantityText;
-import beamwarden.quantity.Voltage;
-import java.math.BigDecimal;
-import java.time.Duration;
+import java.util.Collection;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
-import java.util.function.Function;
 import java.util.regex.Pattern;
+import java.util.stream.Stream;
 
-/** Reads single values from nodes; what cannot be read is told, and gives nothing. */
+/** Reads values without a unit from nodes; what cannot be read is told, and gives nothing. */
 final class Values {
   private static final Pattern ID =
       Pattern.compile("[A-Za-z0-9][A-Za-z0-9._-]{0," + (Limits.ID_CHARACTERS - 1) + "}");
   private static final Pattern WHOLE = Pattern.compile("-?[0-9]{1,18}");
+  private static final Map<String, Boolean> FLAGS = Map.of("true", true, "false", false);
 
   private final Problems problems;
 
@@ -29,324 +20,164 @@ final class Values {
     this.problems = problems;
   }
 
-  /** Which numbers are allowed. */
-  enum Sign {
-    ANY,
-    NOT_NEGATIVE,
-    POSITIVE
+  /** Whether all of these were read. */
+  static boolean all(Optional<?>... values) {
+    return Stream.of(values).allMatch(Optional::isPresent);
   }
 
-  /**
-   * Two numbers, the lower one first.
-   *
-   * @param low the lower one
-   * @param high the higher one, or the same
-   */
-  record Range(BigDecimal low, BigDecimal high) {}
+  /** A node's text as it is written, or its kind. */
+  static String written(Node node) {
+    return node instanceof Node.Scalar scalar && !scalar.empty()
+        ? Printed.quoted(scalar.text())
+        : node.kind();
+  }
 
-  /** One value as text. */
+  /** One value that is not empty. */
   Optional<Node.Scalar> scalar(Node node, String example) {
-    if (node instanceof Node.Scalar scalar && !scalar.empty()) {
-      return Optional.of(scalar);
-    }
-    String kind = node instanceof Node.Scalar ? "empty" : node.kind();
-    problems.error(
-        node,
-        node.name() + " is " + kind + ", where one value is expected",
-        "write for example " + example);
-    return Optional.empty();
+    return node instanceof Node.Scalar scalar && !scalar.empty()
+        ? Optional.of(scalar)
+        : otherKind(node, "one value", example);
   }
 
   Optional<Node.Sequence> list(Node node, String example) {
-    if (node instanceof Node.Sequence list) {
-      return Optional.of(list);
+    return node instanceof Node.Sequence list
+        ? Optional.of(list)
+        : otherKind(node, "a list", example);
+  }
+
+  /** A list with something in it. */
+  List<Node> items(Node node, String example) {
+    Optional<Node.Sequence> list = list(node, example);
+    if (list.isPresent() && list.get().items().isEmpty()) {
+      problems.error(node, node.name() + " is empty", writeForExample(node, example));
     }
-    problems.error(
-        node,
-        node.name() + " is " + node.kind() + ", where a list is expected",
-        "write for example " + node.name() + ": " + example);
-    return Optional.empty();
-  }
-
-  Optional<Node.Mapping> group(Node node, String example) {
-    if (node instanceof Node.Mapping group) {
-      return Optional.of(group);
-    }
-    problems.error(
-        node,
-        node.name() + " is " + node.kind() + ", where a group of keys is expected",
-        "write for example " + example);
-    return Optional.empty();
-  }
-
-  /** The values of a group whose keys are checked. */
-  Optional<Fields> fields(Node node, String example, Keys keys) {
-    return group(node, example)
-        .map(
-            group -> {
-              keys.check(group, problems);
-              return new Fields(group, Optional.empty(), keys.of(), problems);
-            });
-  }
-
-  /** A text of the allowed length. */
-  Optional<String> text(Node node, String example) {
-    return scalar(node, example)
-        .map(Node.Scalar::text)
-        .filter(
-            text -> {
-              if (text.length() <= Limits.TEXT_CHARACTERS) {
-                return true;
-              }
-              problems.error(
-                  node,
-                  node.name() + " has " + text.length() + " characters",
-                  "write at most " + Limits.TEXT_CHARACTERS);
-              return false;
-            });
-  }
-
-  /** A name that may end in a path or an address. */
-  Optional<String> id(Node node, String example) {
-    return scalar(node, example).flatMap(scalar -> checkedId(scalar, scalar.text(), example));
-  }
-
-  /** The same for a name that stands as a key. */
-  Optional<String> id(Node.Scalar key) {
-    return checkedId(key, key.text(), "grain-2");
-  }
-
-  private Optional<String> checkedId(Node node, String text, String example) {
-    if (ID.matcher(text).matches()) {
-      return Optional.of(text);
-    }
-    problems.error(
-        node,
-        "\"" + Printed.quoted(text) + "\" is no name that can stand in a path or an address",
-        "write at most "
-            + Limits.ID_CHARACTERS
-            + " of a-z A-Z 0-9 - _ . that begin with a letter or digit, such as "
-            + example);
-    return Optional.empty();
-  }
-
-  Optional<Boolean> flag(Node node) {
-    return choice(node, Map.of("true", true, "false", false), List.of("true", "false"));
-  }
-
-  /** One of some names. */
-  <T> Optional<T> choice(Node node, Map<String, T> meanings, List<String> inOrder) {
-    return scalar(node, inOrder.get(0))
-        .flatMap(
-            scalar -> {
-              Optional<T> meant = Optional.ofNullable(meanings.get(scalar.text()));
-              if (meant.isEmpty()) {
-                String written = Printed.quoted(scalar.text());
-                problems.error(
-                    node,
-                    node.name() + " cannot be " + written,
-                    Near.to(scalar.text(), inOrder)
-                        .map(near -> "did you mean " + near + "?")
-                        .orElse("write " + Printed.anyOf(inOrder)));
-              }
-              return meant;
-            });
-  }
-
-  /** A whole number from {@code low} to {@code high}. */
-  Optional<Long> whole(Node node, long low, long high) {
-    return scalar(node, Long.toString(low))
-        .flatMap(
-            scalar -> {
-              if (WHOLE.matcher(scalar.text()).matches()) {
-                long number = Long.parseLong(scalar.text());
-                if (number >= low && number <= high) {
-                  return Optional.of(number);
-                }
-              }
-              problems.error(
-                  node,
-                  node.name()
-                      + " is "
-                      + Printed.quoted(scalar.text())
-                      + ", which is no whole number from "
-                      + low
-                      + " to "
-                      + high,
-                  "write for example " + Math.max(low, Math.min(5, high)));
-              return Optional.empty();
-            });
-  }
-
-  Optional<Voltage> voltage(Node node) {
-    return quantity(node, Dimension.VOLTAGE, Sign.POSITIVE).map(v -> new Voltage(v.doubleValue()));
-  }
-
-  Optional<Current> current(Node node, Sign sign) {
-    return quantity(node, Dimension.CURRENT, sign).map(v -> new Current(v.doubleValue()));
-  }
-
-  Optional<Charge> charge(Node node) {
-    return quantity(node, Dimension.CHARGE, Sign.NOT_NEGATIVE)
-        .map(v -> new Charge(v.doubleValue()));
-  }
-
-  Optional<Fluence> fluence(Node node) {
-    return quantity(node, Dimension.FLUENCE, Sign.NOT_NEGATIVE)
-        .map(v -> new Fluence(v.doubleValue()));
-  }
-
-  Optional<Length> length(Node node, Sign sign) {
-    return quantity(node, Dimension.LENGTH, sign).map(v -> new Length(v.doubleValue()));
-  }
-
-  Optional<Double> number(Node node, Dimension dimension, Sign sign) {
-    return quantity(node, dimension, sign).map(BigDecimal::doubleValue);
-  }
-
-  /** A part of a whole, from 0 to {@code most}. */
-  Optional<Double> part(Node node, String most) {
-    BigDecimal limit = QuantityText.value(most, Dimension.RATIO);
-    return quantity(node, Dimension.RATIO, Sign.NOT_NEGATIVE)
-        .filter(value -> atMost(node, value, limit, most))
-        .map(BigDecimal::doubleValue);
-  }
-
-  private boolean atMost(Node node, BigDecimal value, BigDecimal limit, String most) {
-    if (value.compareTo(limit) <= 0) {
-      return true;
-    }
-    problems.error(
-        node,
-        node.name() + " is " + written(node) + ", more than " + most,
-        "write at most " + most);
-    return false;
-  }
-
-  /** A time of whole nanoseconds within a year. */
-  Optional<Duration> time(Node node, Sign sign) {
-    return parsed(node, Dimension.TIME.example(), QuantityText::duration)
-        .filter(time -> signed(node, Long.signum(time.compareTo(Duration.ZERO)), sign))
-        .filter(
-            time -> {
-              boolean fits = time.compareTo(Limits.TIME) <= 0;
-              if (!fits) {
-                problems.error(
-                    node,
-                    node.name() + " is " + written(node) + ", more than a year",
-                    "write a shorter time");
-              }
-              return fits;
-            });
-  }
-
-  /** The value of a quantity in the unit of its dimension. */
-  Optional<BigDecimal> quantity(Node node, Dimension dimension, Sign sign) {
-    return parsed(node, dimension.example(), text -> QuantityText.value(text, dimension))
-        .filter(value -> signed(node, value.signum(), sign));
-  }
-
-  /** Two quantities in brackets, the lower one first. */
-  Optional<Range> range(Node node, Dimension dimension, Sign sign, String example) {
-    return pair(node, example)
-        .flatMap(
-            pair -> {
-              Optional<BigDecimal> low = quantity(pair.get(0), dimension, sign);
-              Optional<BigDecimal> high = quantity(pair.get(1), dimension, sign);
-              if (low.isEmpty() || high.isEmpty()) {
-                return Optional.empty();
-              }
-              if (low.get().compareTo(high.get()) > 0) {
-                problems.error(
-                    node,
-                    node.name() + " has its higher end first",
-                    "write the lower end first, such as " + example);
-                return Optional.empty();
-              }
-              return Optional.of(new Range(low.get(), high.get()));
-            });
-  }
-
-  /** A place as two lengths in brackets. */
-  Optional<Point> point(Node node) {
-    return pair(node, "[120 um, -40 um]")
-        .flatMap(
-            pair -> {
-              Optional<Length> x = length(pair.get(0), Sign.ANY);
-              Optional<Length> y = length(pair.get(1), Sign.ANY);
-              return x.isEmpty() || y.isEmpty()
-                  ? Optional.empty()
-                  : Optional.of(new Point(x.get().metres(), y.get().metres()));
-            });
+    return list.map(Node.Sequence::items).orElse(List.of());
   }
 
   /** The two items of a list. */
   Optional<List<Node>> pair(Node node, String example) {
-    return list(node, example)
-        .map(Node.Sequence::items)
-        .filter(
-            items -> {
-              if (items.size() == 2) {
-                return true;
-              }
-              problems.error(
-                  node,
-                  node.name() + " has " + items.size() + " values, where two are expected",
-                  "write for example " + node.name() + ": " + example);
-              return false;
-            });
-  }
-
-  /** The value when it lies between two limits, both included. */
-  <T extends Comparable<T>> Optional<T> within(
-      Node node, T value, T low, T high, String whose, Function<T, String> print) {
-    boolean less = value.compareTo(low) < 0;
-    if (!less && value.compareTo(high) <= 0) {
-      return Optional.of(value);
+    Optional<List<Node>> items = list(node, example).map(Node.Sequence::items);
+    if (items.isPresent() && items.get().size() != 2) {
+      problems.error(
+          node,
+          node.name() + " has " + count(items.get().size()) + ", where two are expected",
+          writeForExample(node, example));
     }
-    problems.error(
-        node,
-        node.name()
-            + " is "
-            + written(node)
-            + (less ? ", less than the least of " : ", more than the most of ")
-            + whose
-            + ", "
-            + print.apply(less ? low : high),
-        "write " + print.apply(low) + " to " + print.apply(high));
-    return Optional.empty();
+    return items.filter(found -> found.size() == 2);
   }
 
-  /** A node's text as it is written. */
-  static String written(Node node) {
-    return node instanceof Node.Scalar scalar ? Printed.quoted(scalar.text()) : node.kind();
+  Optional<Node.Mapping> group(Node node, String example) {
+    return node instanceof Node.Mapping group
+        ? Optional.of(group)
+        : otherKind(node, "a group of keys", example);
   }
 
-  private <T> Optional<T> parsed(Node node, String example, Function<String, T> parser) {
-    return scalar(node, example)
-        .flatMap(
-            scalar -> {
-              try {
-                return Optional.of(parser.apply(scalar.text()));
-              } catch (QuantityFormatException refused) {
-                problems.error(
-                    node,
-                    node.name() + ": " + Printed.line(refused.reason()),
-                    Printed.line(refused.advice()));
-                return Optional.empty();
-              }
-            });
+  /** The values of a group whose keys are checked. */
+  Optional<Fields> fields(Node node, String example, Keys keys) {
+    Optional<Node.Mapping> group = group(node, example);
+    group.ifPresent(found -> keys.check(found, problems));
+    return group.map(found -> new Fields(found, keys, problems));
   }
 
-  private boolean signed(Node node, int signum, Sign sign) {
-    if (sign == Sign.POSITIVE && signum <= 0) {
-      problems.error(node, node.name() + " is " + written(node), "write a value above zero");
+  /** A text in one line, of the allowed length. */
+  Optional<String> text(Node node, String example) {
+    return scalar(node, example).map(Node.Scalar::text).filter(text -> printable(node, text));
+  }
+
+  private boolean printable(Node node, String text) {
+    if (text.length() > Limits.TEXT_CHARACTERS) {
+      problems.error(
+          node,
+          node.name() + " has " + text.length() + " characters",
+          "write at most " + Limits.TEXT_CHARACTERS);
       return false;
     }
-    if (sign == Sign.NOT_NEGATIVE && signum < 0) {
-      problems.error(node, node.name() + " is " + written(node), "write zero or a value above it");
+    if (!Printed.line(text).equals(text.strip())) {
+      problems.error(
+          node,
+          node.name() + " holds a line break or another control character",
+          "write it in one line");
       return false;
     }
     return true;
+  }
+
+  /** A name that may end in a path or an address. */
+  Optional<String> id(Node node, String example) {
+    return scalar(node, example).map(Node.Scalar::text).filter(text -> safe(node, text, example));
+  }
+
+  private boolean safe(Node node, String text, String example) {
+    if (ID.matcher(text).matches()) {
+      return true;
+    }
+    problems.error(
+        node,
+        '"' + Printed.quoted(text) + "\" cannot stand in a path or an address",
+        "write at most "
+            + Limits.ID_CHARACTERS
+            + " letters a-z, digits, - _ and . that begin with a letter or digit, such as "
+            + example);
+    return false;
+  }
+
+  Optional<Boolean> flag(Node node) {
+    return choice(node, FLAGS, List.of("true", "false"));
+  }
+
+  /** One of some names. */
+  <T> Optional<T> choice(Node node, Map<String, T> meanings, List<String> inOrder) {
+    Optional<String> text = scalar(node, inOrder.get(0)).map(Node.Scalar::text);
+    Optional<T> meant = text.map(meanings::get);
+    if (text.isPresent() && meant.isEmpty()) {
+      problems.error(
+          node,
+          node.name() + " cannot be " + Printed.quoted(text.get()),
+          () -> Near.advice(text.get(), inOrder));
+    }
+    return meant;
+  }
+
+  /** One of the names that are known; {@code unknown} begins the problem with any other. */
+  Optional<String> known(Node node, Collection<String> names, String unknown, String example) {
+    Optional<String> text = scalar(node, example).map(Node.Scalar::text);
+    if (text.isPresent() && !names.contains(text.get())) {
+      problems.error(
+          node, unknown + " " + Printed.quoted(text.get()), () -> Near.advice(text.get(), names));
+    }
+    return text.filter(names::contains);
+  }
+
+  /** A whole number from {@code low} to {@code high}. */
+  Optional<Long> whole(Node node, long low, long high) {
+    Optional<String> text = scalar(node, Long.toString(low)).map(Node.Scalar::text);
+    Optional<Long> number =
+        text.filter(found -> WHOLE.matcher(found).matches())
+            .map(Long::valueOf)
+            .filter(found -> low <= found && found <= high);
+    if (text.isPresent() && number.isEmpty()) {
+      problems.error(
+          node,
+          node.name() + " is " + Printed.quoted(text.get()),
+          "write a whole number from " + low + " to " + high);
+    }
+    return number;
+  }
+
+  private <T> Optional<T> otherKind(Node node, String expected, String example) {
+    problems.error(
+        node,
+        node.name() + " is " + node.kind() + ", where " + expected + " is expected",
+        writeForExample(node, example));
+    return Optional.empty();
+  }
+
+  private static String count(int values) {
+    return values == 1 ? "one value" : values + " values";
+  }
+
+  /** An example with its key, unless the node is an item of a list. */
+  private static String writeForExample(Node node, String example) {
+    return "write for example " + (node.place().item() ? "" : node.name() + ": ") + example;
   }
 }

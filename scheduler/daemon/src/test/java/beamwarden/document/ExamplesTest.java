@@ -1,6 +1,7 @@
 package beamwarden.document;
 
 import static org.junit.jupiter.api.Assertions.assertEquals;
+import static org.junit.jupiter.api.Assertions.assertTrue;
 
 import beamwarden.profile.Profile;
 import beamwarden.queue.Queue;
@@ -11,34 +12,42 @@ import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.ValueSource;
 
 class ExamplesTest {
-  private static final Path FOLDER =
-      Path.of(System.getProperty("beamwarden.root")).resolve("queue-examples");
+  private static final Profile NORTH_ROOM =
+      ProfileDocuments.read(example("north-room.yaml")).value().orElseThrow();
 
   @Test
   void theProfileReadsWithoutProblems() {
-    assertEquals(List.of(), texts(ProfileDocuments.read(FOLDER.resolve("north-room.yaml"))));
+    assertEquals(List.of(), Samples.problems(ProfileDocuments.read(example("north-room.yaml"))));
   }
 
   @ParameterizedTest
   @ValueSource(strings = {"01-first-look.yaml", "01-first-look.json", "02-overnight.yaml"})
   void queuesReadWithoutProblems(String name) {
-    assertEquals(List.of(), texts(QueueDocuments.read(FOLDER.resolve(name), northRoom())));
+    assertEquals(List.of(), Samples.problems(QueueDocuments.read(example(name), NORTH_ROOM)));
   }
 
   @Test
   void theSameQueueReadsEqualInYamlAndInJson() {
-    Queue yaml =
-        QueueDocuments.read(FOLDER.resolve("01-first-look.yaml"), northRoom()).value().get();
-    Queue json =
-        QueueDocuments.read(FOLDER.resolve("01-first-look.json"), northRoom()).value().get();
-    assertEquals(yaml, json);
+    assertEquals(queue("01-first-look.yaml"), queue("01-first-look.json"));
   }
 
-  private static Profile northRoom() {
-    return ProfileDocuments.read(FOLDER.resolve("north-room.yaml")).value().get();
+  @ParameterizedTest
+  @ValueSource(
+      strings = {
+        "north-room.yaml",
+        "01-first-look.yaml",
+        "01-first-look.json",
+        "02-overnight.yaml"
+      })
+  void theReadmeNamesEveryExample(String name) {
+    assertTrue(Samples.text(example("README.md")).contains("`" + name + "`"));
   }
 
-  private static List<String> texts(Reading<?> reading) {
-    return reading.problems().stream().map(Problem::text).toList();
+  private static Queue queue(String name) {
+    return QueueDocuments.read(example(name), NORTH_ROOM).value().orElseThrow();
+  }
+
+  private static Path example(String name) {
+    return Samples.EXAMPLES.resolve(name);
   }
 }
