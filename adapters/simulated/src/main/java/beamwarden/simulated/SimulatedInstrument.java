@@ -8,6 +8,7 @@ import beamwarden.instrument.Instrument;
 import beamwarden.instrument.InstrumentEvent;
 import beamwarden.instrument.InstrumentListener;
 import beamwarden.instrument.StopWhen;
+import java.nio.file.Path;
 import java.time.Duration;
 import java.util.Optional;
 import java.util.Set;
@@ -30,6 +31,15 @@ public final class SimulatedInstrument implements Instrument {
   /** An adapter in memory; its hardware says how it is simulated. */
   public SimulatedInstrument(Hardware hardware, Notes notes) {
     this(hardware, notes, Optional.empty(), () -> {});
+  }
+
+  /**
+   * An adapter in memory that writes its data, when its hardware's simulation says so.
+   *
+   * @param folder the folder for its data; nothing else is kept there
+   */
+  public SimulatedInstrument(Hardware hardware, Notes notes, Path folder) {
+    this(hardware, notes, Optional.of(new DataFolder(folder, hardware.time())), () -> {});
   }
 
   /**
