@@ -34,8 +34,8 @@ import java.util.Set;
 
 /** An invented lab for tests: one instrument with a night shift on every day of the week. */
 final class Lab {
-  /** A Wednesday, two hours before the night shift opens at 18:00 UTC. */
-  static final Instant AFTERNOON = Instant.parse("2031-03-12T16:00:00Z");
+  /** A Wednesday, ten minutes before the night shift opens at 18:00 UTC. */
+  static final Instant AFTERNOON = Instant.parse("2031-03-12T17:50:00Z");
 
   static final String STORE = "store-of-tests";
 
