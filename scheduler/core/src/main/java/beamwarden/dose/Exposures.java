@@ -28,7 +28,7 @@ import java.util.Optional;
  */
 public final class Exposures {
   /** How long an exposure lasts at most, unless a single line takes longer. */
-  public static final Duration USUAL_LENGTH = Duration.ofSeconds(30);
+  public static final Duration USUAL_LENGTH = Duration.ofSeconds(60);
 
   private final Job job;
   private final Abilities abilities;
@@ -188,8 +188,12 @@ public final class Exposures {
         : Math.min(left, Math.max(1, ability().shortestDwell().toNanos()));
   }
 
-  private static long usual(Pass pass) {
-    return Math.max(1, USUAL_LENGTH.toNanos() / unitNanos(pass));
+  /** As many units as usual; a slice at a point is no longer than the mode's longest. */
+  private long usual(Pass pass) {
+    boolean slices = job.acquisition() instanceof Acquisition.Spot;
+    long most = USUAL_LENGTH.toNanos();
+    long longest = slices ? Math.min(most, ability().longestDwell().toNanos()) : most;
+    return Math.max(1, longest / unitNanos(pass));
   }
 
   private static long unitNanos(Pass pass) {

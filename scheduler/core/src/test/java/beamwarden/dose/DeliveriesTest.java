@@ -156,8 +156,8 @@ class DeliveriesTest {
   @Test
   void aWholeJobIsItsExposuresWithOneStayForEachTile() {
     Mosaic mosaic = new Mosaic(2, 1, 1e-4, 1e-4, 0.1, Fixtures.point(0, 0), 0);
-    // 1.2 s a line, 60 lines a pass: three exposures each.
-    Job job = Fixtures.map(mosaic, 100, 60, Duration.ofNanos(11_998_000), 1, "green", "red");
+    // 2.4 s a line, 60 lines a pass: three exposures each.
+    Job job = Fixtures.map(mosaic, 100, 60, Duration.ofNanos(23_998_000), 1, "green", "red");
     List<Delivery> whole =
         Deliveries.whole(
             job,

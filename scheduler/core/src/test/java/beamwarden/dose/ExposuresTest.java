@@ -106,11 +106,11 @@ class ExposuresTest {
     }
 
     @Test
-    void takesTheLinesOfAboutThirtySecondsAlikeInNumber() {
-      // A line takes 1.2 s, 25 of them 30 s; 60 lines are cut into 20, 20 and 20.
+    void takesTheLinesOfAboutAMinuteAlikeInNumber() {
+      // A line takes 2.4 s, 25 of them 60 s; 60 lines are cut into 20, 20 and 20.
       Job job =
           Fixtures.map(
-              Fixtures.square(0, 0, 10, 10), 100, 60, Duration.ofNanos(11_998_000), 1, "green");
+              Fixtures.square(0, 0, 10, 10), 100, 60, Duration.ofNanos(23_998_000), 1, "green");
       assertEquals(List.of(20L, 20L, 20L), unitsOf(job));
     }
 
