@@ -5,13 +5,18 @@ import beamwarden.beam.Point;
 /**
  * The axes along which a sum is made: the sample's own, turned counter-clockwise.
  *
- * @param turnDegrees by how much
+ * @param turnDegrees by how much; quarter turns are left out, since they change no axis
  */
 record Axes(double turnDegrees) {
   /** The sample's own axes. */
   static final Axes SAMPLE = new Axes(0);
 
   private static final double SAME_DEGREES = 1e-9;
+
+  /** Leaves out quarter turns. */
+  Axes {
+    turnDegrees -= 90 * Math.floor(turnDegrees / 90);
+  }
 
   /** A place on the sample, in these axes. */
   Point in(Point onSample) {
@@ -23,17 +28,13 @@ record Axes(double turnDegrees) {
     return inAxes.turned(turnDegrees);
   }
 
-  /** How many quarter turns lie between these axes and something turned; empty when not whole. */
+  /** Whether something of that turn has its sides along these axes. */
   boolean alongWith(double otherTurnDegrees) {
-    return Math.abs(fromQuarter(otherTurnDegrees)) < SAME_DEGREES;
+    return Math.abs(Math.IEEEremainder(otherTurnDegrees - turnDegrees, 90)) < SAME_DEGREES;
   }
 
   /** Whether something that lies along these axes has its width along their y axis. */
   boolean crosswise(double otherTurnDegrees) {
     return Math.round((otherTurnDegrees - turnDegrees) / 90) % 2 != 0;
-  }
-
-  private double fromQuarter(double otherTurnDegrees) {
-    return Math.IEEEremainder(otherTurnDegrees - turnDegrees, 90);
   }
 }

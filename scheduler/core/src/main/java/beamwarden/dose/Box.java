@@ -95,15 +95,6 @@ record Box(long left, long bottom, long right, long top) {
     return left <= other.left && bottom <= other.bottom && right >= other.right && top >= other.top;
   }
 
-  /** The smallest box around both. */
-  Box with(Box other) {
-    return new Box(
-        Math.min(left, other.left),
-        Math.min(bottom, other.bottom),
-        Math.max(right, other.right),
-        Math.max(top, other.top));
-  }
-
   /** One step of the grid in its middle. */
   Box heart() {
     long x = Math.floorDiv(left + right, 2);

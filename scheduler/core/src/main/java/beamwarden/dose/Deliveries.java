@@ -96,16 +96,13 @@ public final class Deliveries {
     Duration least = beamOn(inFull, receipt.unitsDone());
     Duration beamOn = longer(receipt.beamOn(), least);
     return new Receiving.Believed(
-        new Delivery(
-            inFull.grant(),
-            inFull.stay(),
-            inFull.exposure(),
+        as(
+            inFull,
             receipt.unitsTouched(),
             beamOn,
             beamOn,
             best(inFull, receipt),
-            inFull.upperCurrent(),
-            inFull.tolerances()));
+            inFull.upperCurrent()));
   }
 
   private static Optional<String> contradiction(Delivery inFull, Receipt receipt) {
@@ -140,15 +137,31 @@ public final class Deliveries {
     Current seen = highestSeen(receipt);
     Current truly = new Current(seen.amperes() * (1 + meter.tolerance()) + meter.floor().amperes());
     Current upper = seen.amperes() == 0 ? inFull.upperCurrent() : inFull.upperCurrent().max(truly);
-    return new Delivery(
-        inFull.grant(),
-        inFull.stay(),
-        inFull.exposure(),
+    return as(
+        inFull,
         inFull.unitsTouched(),
         longer(inFull.bestBeamOn(), receipt.beamOn()),
         longer(inFull.upperBeamOn(), receipt.beamOn()),
         inFull.bestCurrent().max(seen),
-        upper,
+        upper);
+  }
+
+  private static Delivery as(
+      Delivery inFull,
+      long touched,
+      Duration bestBeamOn,
+      Duration upperBeamOn,
+      Current bestCurrent,
+      Current upperCurrent) {
+    return new Delivery(
+        inFull.grant(),
+        inFull.stay(),
+        inFull.exposure(),
+        touched,
+        bestBeamOn,
+        upperBeamOn,
+        bestCurrent,
+        upperCurrent,
         inFull.tolerances());
   }
 

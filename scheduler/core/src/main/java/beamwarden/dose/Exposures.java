@@ -3,10 +3,10 @@ package beamwarden.dose;
 import beamwarden.beam.Conditions;
 import beamwarden.beam.Exposure;
 import beamwarden.beam.Mosaic;
-import beamwarden.beam.Point;
 import beamwarden.beam.Points;
 import beamwarden.beam.RasterScan;
 import beamwarden.beam.Rectangle;
+import beamwarden.beam.Scan;
 import beamwarden.beam.SpotScan;
 import beamwarden.instrument.Abilities;
 import beamwarden.instrument.ModeAbility;
@@ -32,29 +32,26 @@ public final class Exposures {
 
   private final Job job;
   private final Abilities abilities;
-  private final Optional<Trim> limit;
-  private final List<Rectangle> tiles;
-  private final List<Point> points;
-  private final int passes;
+  private final List<Scan> places;
+  private final List<String> filters;
+  private final int frames;
+  private final int framesKept;
+  private final long units;
 
   private Exposures(Job job, Abilities abilities, Optional<Trim> limit) {
     this.job = job;
     this.abilities = abilities;
-    this.limit = limit;
-    this.tiles = tiles(job);
-    this.points = points(job);
-    this.passes = passes(job, tiles.size() + points.size());
+    places = places(job, ability(job, abilities).flyback());
+    filters = filters(job);
+    frames = frames(job);
+    framesKept = limit.map(cut -> cut.passes() / (places.size() * filters.size())).orElse(frames);
+    long whole = places.get(0).units();
+    units = limit.map(cut -> Math.min(whole, cut.unitsPerPass())).orElse(whole);
   }
 
   /** How many passes a job makes when it is not trimmed. */
   public static int passes(Job job) {
-    return passes(job, tiles(job).size() + points(job).size());
-  }
-
-  private static int passes(Job job, int places) {
-    return job.acquisition() instanceof Acquisition.Raster raster
-        ? places * raster.frames() * raster.filters().size()
-        : places;
+    return places(job, Duration.ZERO).size() * frames(job) * filters(job).size();
   }
 
   /**
@@ -93,13 +90,14 @@ public final class Exposures {
   }
 
   private Optional<Exposure> next(Sample sample, Done done, Optional<Duration> longest) {
-    for (int number = 0; number < passes; number++) {
-      if (kept(number) && done.units(number) < units()) {
+    for (int number = 0; number < passes(); number++) {
+      long left = left(number, done);
+      if (left > 0) {
         Pass pass = pass(number);
-        long count = count(pass, units() - done.units(number), longest);
+        long count = count(pass, left, longest);
         return count == 0
             ? Optional.empty()
-            : Optional.of(exposure(sample, pass, done.units(number), count));
+            : Optional.of(exposure(sample, pass, units - left, count));
       }
     }
     return Optional.empty();
@@ -107,11 +105,11 @@ public final class Exposures {
 
   private Work remaining(Done done) {
     Work work = Work.NONE;
-    for (int number = 0; number < passes; number++) {
-      long left = kept(number) ? units() - done.units(number) : 0;
+    for (int number = 0; number < passes(); number++) {
+      long left = left(number, done);
       if (left > 0) {
         Pass pass = pass(number);
-        var scan = pass.part(done.units(number), left);
+        Scan scan = pass.part(units - left, left);
         int parts = Math.toIntExact(ceiling(left, usual(pass)));
         work = work.plus(new Work(left, scan.beamOn(), scan.duration(), parts, 1));
       }
@@ -120,72 +118,45 @@ public final class Exposures {
   }
 
   private Exposure exposure(Sample sample, Pass pass, long first, long count) {
-    Conditions conditions = new Conditions(job.beam(), job.acquisition().mode(), pass.filter());
     return new Exposure(
         job.id(),
         pass.number(),
         sample.id(),
         sample.placement(),
-        conditions,
+        new Conditions(job.beam(), job.acquisition().mode(), pass.filter()),
         pass.part(first, count));
   }
 
+  private int passes() {
+    return places.size() * frames * filters.size();
+  }
+
   private Pass pass(int number) {
-    if (number < 0 || number >= passes) {
+    if (number < 0 || number >= passes()) {
       throw new IllegalArgumentException(
-          "job " + job.id() + " has " + passes + " passes, none with number " + number);
+          "job " + job.id() + " has " + passes() + " passes, none with number " + number);
     }
-    if (job.acquisition() instanceof Acquisition.Raster raster) {
-      int place = number / (raster.frames() * raster.filters().size());
-      String filter = raster.filters().get(number % raster.filters().size());
-      return new Pass(number, place, filter, scan(raster, tiles.get(place)));
-    }
-    return new Pass(
-        number,
-        number,
-        Conditions.PANCHROMATIC,
-        new SpotScan(points.get(number), ((Acquisition.Spot) job.acquisition()).longest()));
+    int place = number / (frames * filters.size());
+    return new Pass(number, place, filters.get(number % filters.size()), places.get(place));
   }
 
-  private RasterScan scan(Acquisition.Raster raster, Rectangle tile) {
-    Duration flyback = ability().flyback();
-    return new RasterScan(
-        tile, raster.columns(), raster.rows(), 0, raster.rows(), raster.dwell(), flyback);
-  }
-
-  /** Whether a trimmed job still makes a pass: the first frames of every tile remain. */
-  private boolean kept(int number) {
-    if (limit.isEmpty() || !(job.acquisition() instanceof Acquisition.Raster raster)) {
-      return true;
-    }
-    int filters = raster.filters().size();
-    return number / filters % raster.frames() < limit.get().passes() / (tiles.size() * filters);
-  }
-
-  /** The units of each pass that are to be done. */
-  private long units() {
-    long all =
-        job.acquisition() instanceof Acquisition.Raster raster
-            ? raster.rows()
-            : ((Acquisition.Spot) job.acquisition()).longest().toNanos();
-    return limit.map(trim -> Math.min(all, trim.unitsPerPass())).orElse(all);
+  /** The units of a pass that are to be done and are not; a trimmed job keeps its first frames. */
+  private long left(int number, Done done) {
+    boolean kept = number / filters.size() % frames < framesKept;
+    return kept ? Math.max(0, units - done.units(number)) : 0;
   }
 
   /** How many of the units that are left the next exposure takes; 0 when none fits. */
   private long count(Pass pass, long left, Optional<Duration> longest) {
     long alike = ceiling(left, ceiling(left, usual(pass)));
-    if (longest.isEmpty()) {
-      return alike;
-    }
-    long fitting = Math.max(0, longest.get().toNanos()) / unitNanos(pass);
-    return fitting >= alike || fitting >= least(left) ? Math.min(alike, fitting) : 0;
+    long fitting = longest.map(time -> Math.max(0, time.toNanos()) / unitNanos(pass)).orElse(alike);
+    return fitting < Math.min(left, least(pass)) ? 0 : Math.min(alike, fitting);
   }
 
   /** The fewest units worth an exposure: a line, or the shortest slice at a point. */
-  private long least(long left) {
-    return job.acquisition() instanceof Acquisition.Raster
-        ? 1
-        : Math.min(left, Math.max(1, ability().shortestDwell().toNanos()));
+  private long least(Pass pass) {
+    Duration shortest = ability(job, abilities).shortestDwell();
+    return pass.whole() instanceof RasterScan ? 1 : Math.max(1, shortest.toNanos());
   }
 
   /** As many units as usual; a slice at a point is no longer than the mode's longest. */
@@ -204,25 +175,44 @@ public final class Exposures {
     return (dividend + divisor - 1) / divisor;
   }
 
-  private ModeAbility ability() {
-    ModeAbility ability = abilities.modes().get(job.acquisition().mode());
-    if (ability == null) {
-      throw new IllegalArgumentException(
-          "job "
-              + job.id()
-              + " needs the mode "
-              + job.acquisition().mode().text()
-              + ", which the instrument "
-              + abilities.instrument()
-              + " does not offer");
+  private static ModeAbility ability(Job job, Abilities abilities) {
+    return Optional.ofNullable(abilities.modes().get(job.acquisition().mode()))
+        .orElseThrow(
+            () ->
+                new IllegalArgumentException(
+                    "job %s needs the mode %s, which the instrument %s does not offer"
+                        .formatted(
+                            job.id(), job.acquisition().mode().text(), abilities.instrument())));
+  }
+
+  private static List<String> filters(Job job) {
+    return job.acquisition() instanceof Acquisition.Raster raster
+        ? raster.filters()
+        : List.of(Conditions.PANCHROMATIC);
+  }
+
+  private static int frames(Job job) {
+    return job.acquisition() instanceof Acquisition.Raster raster ? raster.frames() : 1;
+  }
+
+  /** What one pass scans at each tile or point. */
+  private static List<Scan> places(Job job, Duration flyback) {
+    if (job.acquisition() instanceof Acquisition.Raster raster) {
+      return tiles(job).stream().map(tile -> scan(raster, tile, flyback)).toList();
     }
-    return ability;
+    if (job.region() instanceof Points points) {
+      Duration longest = ((Acquisition.Spot) job.acquisition()).longest();
+      return points.places().stream().map(at -> (Scan) new SpotScan(at, longest)).toList();
+    }
+    throw unfit(job, "a rest of the beam needs points");
+  }
+
+  private static Scan scan(Acquisition.Raster raster, Rectangle tile, Duration flyback) {
+    return new RasterScan(
+        tile, raster.columns(), raster.rows(), 0, raster.rows(), raster.dwell(), flyback);
   }
 
   private static List<Rectangle> tiles(Job job) {
-    if (!(job.acquisition() instanceof Acquisition.Raster)) {
-      return List.of();
-    }
     if (job.region() instanceof Rectangle rectangle) {
       return List.of(rectangle);
     }
@@ -232,23 +222,9 @@ public final class Exposures {
     throw unfit(job, "a raster needs a rectangle or a mosaic");
   }
 
-  private static List<Point> points(Job job) {
-    if (job.acquisition() instanceof Acquisition.Raster) {
-      return List.of();
-    }
-    if (job.region() instanceof Points places) {
-      return places.places();
-    }
-    throw unfit(job, "a rest of the beam needs points");
-  }
-
   private static IllegalArgumentException unfit(Job job, String need) {
+    String region = job.region().getClass().getSimpleName().toLowerCase(Locale.ROOT);
     return new IllegalArgumentException(
-        "job "
-            + job.id()
-            + " cannot be exposed: "
-            + need
-            + " as its region, not a "
-            + job.region().getClass().getSimpleName().toLowerCase(Locale.ROOT));
+        "job %s cannot be exposed: %s as its region, not a %s".formatted(job.id(), need, region));
   }
 }

@@ -42,7 +42,7 @@ final class Highest {
   static Optional<Footprint> of(List<Footprint> footprints, Box window, List<Box> exempt) {
     List<Footprint> inside =
         footprints.stream()
-            .filter(footprint -> footprint.fluence() > 0)
+            .filter(footprint -> footprint.fluence() != 0)
             .flatMap(
                 footprint ->
                     footprint.box().common(window).stream()
@@ -62,6 +62,9 @@ final class Highest {
 
   private Optional<Footprint> sweep() {
     double total = inside.stream().mapToDouble(Footprint::fluence).sum();
+    if (!Double.isFinite(total)) {
+      throw new IllegalStateException("a sum of fluences must be a finite number, not " + total);
+    }
     List<Edge> edges = edges(total);
     long[] covered = new long[ys.length - 1];
     int[] barred = new int[ys.length - 1];

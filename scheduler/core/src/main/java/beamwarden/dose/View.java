@@ -3,6 +3,7 @@ package beamwarden.dose;
 import beamwarden.beam.Placement;
 import beamwarden.beam.Point;
 import beamwarden.beam.RasterScan;
+import beamwarden.beam.Rectangle;
 import beamwarden.quantity.Fluence;
 import beamwarden.queue.Area;
 import beamwarden.queue.Averaging;
@@ -148,27 +149,21 @@ record View(
   }
 
   private Axes axes(PassDose pass) {
-    Stream<Double> ofExempt =
-        exempt.stream()
-            .map(area -> area.outline().turnDegrees())
-            .filter(turn -> isNear(pass, new Axes(turn)));
-    Stream<Double> ofInside = inside.stream().map(area -> area.outline().turnDegrees());
-    Stream<Double> ofPass =
+    Stream<Area> areas =
+        Stream.concat(exempt.stream().filter(area -> isNear(pass, area)), inside.stream());
+    Stream<Rectangle> frames =
         pass.key().whole() instanceof RasterScan raster
-            ? Stream.of(raster.frame().turnDegrees())
+            ? Stream.of(raster.frame())
             : Stream.empty();
-    return Stream.of(ofExempt, ofInside, ofPass)
-        .flatMap(turns -> turns)
+    return Stream.concat(areas.map(Area::outline), frames)
         .findFirst()
-        .map(Axes::new)
+        .map(outline -> new Axes(outline.turnDegrees()))
         .orElse(Axes.SAMPLE);
   }
 
-  private boolean isNear(PassDose pass, Axes axes) {
-    Box bounds = pass.bounds(worth, averages, placement, axes);
-    return exempt.stream()
-        .filter(area -> area.outline().turnDegrees() == axes.turnDegrees())
-        .anyMatch(area -> Ground.box(area, axes).overlaps(bounds));
+  private boolean isNear(PassDose pass, Area area) {
+    Axes axes = new Axes(area.outline().turnDegrees());
+    return Ground.box(area, axes).overlaps(pass.bounds(worth, averages, placement, axes));
   }
 
   private double uncertainty() {

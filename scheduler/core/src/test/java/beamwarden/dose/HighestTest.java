@@ -1,6 +1,7 @@
 package beamwarden.dose;
 
 import static org.junit.jupiter.api.Assertions.assertEquals;
+import static org.junit.jupiter.api.Assertions.assertThrows;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
 import beamwarden.beam.Point;
@@ -55,6 +56,17 @@ class HighestTest {
     assertEquals(
         3e-6, Highest.of(mixed, new Box(6, 0, 20, 5), List.of()).orElseThrow().fluence(), 1e-18);
     assertEquals(1e12, Highest.of(mixed, ALL, List.of()).orElseThrow().fluence());
+  }
+
+  @Test
+  void refusesAFluenceThatIsNoNumber() {
+    for (double fluence : new double[] {Double.POSITIVE_INFINITY, Double.NaN}) {
+      List<Footprint> broken = List.of(new Footprint(new Box(0, 0, 5, 5), fluence));
+      assertEquals(
+          "a sum of fluences must be a finite number, not " + fluence,
+          assertThrows(IllegalStateException.class, () -> Highest.of(broken, ALL, List.of()))
+              .getMessage());
+    }
   }
 
   /** Seeds are fixed; fluences are eighths, so that sums are exact in any order. */
