@@ -31,7 +31,7 @@ public final class Exposures {
   public static final Duration USUAL_LENGTH = Duration.ofSeconds(60);
 
   private final Job job;
-  private final Abilities abilities;
+  private final ModeAbility ability;
   private final List<Scan> places;
   private final List<String> filters;
   private final int frames;
@@ -40,8 +40,8 @@ public final class Exposures {
 
   private Exposures(Job job, Abilities abilities, Optional<Trim> limit) {
     this.job = job;
-    this.abilities = abilities;
-    places = places(job, ability(job, abilities).flyback());
+    ability = ability(job, abilities);
+    places = places(job, ability.flyback());
     filters = filters(job);
     frames = frames(job);
     framesKept = limit.map(cut -> cut.passes() / (places.size() * filters.size())).orElse(frames);
@@ -155,15 +155,14 @@ public final class Exposures {
 
   /** The fewest units worth an exposure: a line, or the shortest slice at a point. */
   private long least(Pass pass) {
-    Duration shortest = ability(job, abilities).shortestDwell();
-    return pass.whole() instanceof RasterScan ? 1 : Math.max(1, shortest.toNanos());
+    return pass.whole() instanceof RasterScan ? 1 : Math.max(1, ability.shortestDwell().toNanos());
   }
 
   /** As many units as usual; a slice at a point is no longer than the mode's longest. */
   private long usual(Pass pass) {
-    boolean slices = job.acquisition() instanceof Acquisition.Spot;
     long most = USUAL_LENGTH.toNanos();
-    long longest = slices ? Math.min(most, ability().longestDwell().toNanos()) : most;
+    boolean slices = pass.whole() instanceof SpotScan;
+    long longest = slices ? Math.min(most, ability.longestDwell().toNanos()) : most;
     return Math.max(1, longest / unitNanos(pass));
   }
 
