@@ -21,7 +21,7 @@ final class ModesReader {
 
   private static final Keys RASTER =
       Keys.of("a mode", "dwell", "field", "flyback", "frame-start", "stops-at")
-          .accepting(List.of("readout"));
+          .notRun(Map.of("readout", "leave it out; pixels are read while the next is exposed"));
   private static final Keys SPOT =
       Keys.of("a mode", "slice", "frame-start", "stops-at").accepting(List.of("bin"));
   private static final Keys NOT_RUN =

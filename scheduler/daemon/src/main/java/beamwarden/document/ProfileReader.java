@@ -18,6 +18,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.Set;
+import java.util.stream.Stream;
 
 /** Reads a whole instrument profile. */
 final class ProfileReader {
@@ -39,8 +40,17 @@ final class ProfileReader {
               "wind-down",
               "shifts",
               "retries",
-              "re-arm")
-          .accepting(List.of("gratings", "changes"));
+              "re-arm",
+              "changes")
+          .accepting(List.of("gratings"));
+
+  /** Changes that this version makes by itself, so that none of them may need hands. */
+  private static final List<String> MADE = List.of("voltage", "current", "mode", "filter", "stage");
+
+  /** Changes that it never makes, so that it does not matter who could. */
+  private static final List<String> NEVER_MADE =
+      List.of(
+          "pulsing", "aperture", "fibre", "grating", "slit", "analyser", "mirror", "temperature");
 
   private static final String ZONE_EXAMPLE = "Europe/Ljubljana";
   private static final int USUAL_RETRIES = 3;
@@ -86,6 +96,7 @@ final class ProfileReader {
             USUAL_RETRIES,
             node -> values.whole(node, 0, Limits.RETRIES).map(Long::intValue));
     fields.get("re-arm").ifPresent(this::checkRearm);
+    fields.get("changes").ifPresent(this::checkChanges);
     return Values.all(abilities, adapter, zone, windDown)
         ? Optional.of(
             new Profile(
@@ -149,6 +160,26 @@ final class ProfileReader {
           () -> Near.question(name.get(), known).orElse("write for example " + ZONE_EXAMPLE));
     }
     return name.filter(known::contains).map(ZoneId::of);
+  }
+
+  /** A change that needs hands must not be made while nobody is there, and none is ever made. */
+  private void checkChanges(Node node) {
+    List<String> known = Stream.concat(MADE.stream(), NEVER_MADE.stream()).toList();
+    Optional<Node.Mapping> group = values.group(node, "{ pulsing: attended }");
+    for (Node.Field change : group.map(Node.Mapping::fields).orElse(List.of())) {
+      Optional<String> name = values.known(change.key(), known, "there is no change of", "pulsing");
+      Optional<Boolean> attended =
+          values.choice(
+              change.value(),
+              Map.of("attended", true, "automatic", false),
+              List.of("attended", "automatic"));
+      if (Values.all(name, attended) && attended.get() && MADE.contains(name.get())) {
+        problems.error(
+            change.value(),
+            Keys.notRunMessage("a change of " + name.get() + " that needs hands"),
+            "write automatic when it needs none; else wait for a version that plans it");
+      }
+    }
   }
 
   private void checkRearm(Node node) {
