@@ -59,7 +59,7 @@ public final class Caps {
   private static Optional<CapVerdict.Refused> fluenceRefusal(Request request, Cap.OnFluence cap) {
     View view = View.of(cap, request.sample(), Worth.UPPER);
     Optional<String> obstacle =
-        request.after().passes().stream()
+        request.after().exposed().stream()
             .flatMap(pass -> view.averages().obstacle(pass.key()).stream())
             .findFirst();
     double limit = cap.limit().electronsPerSquareNanometre();
@@ -69,15 +69,16 @@ public final class Caps {
       return Optional.of(
           new CapVerdict.Refused(cap, FLUENCE_UNIT, 0, 0, limit, Optional.empty(), because));
     }
-    List<PassDose> after = request.after().passes();
-    return view.highest(after, view.touched(after, request.asked()))
+    List<PassDose> after = request.after().exposed();
+    List<PassDose> asked = after.stream().filter(request.asked()::contains).toList();
+    return view.highest(after, view.touched(after, asked))
         .filter(place -> !(place.sum() <= limit))
         .map(place -> refused(request, cap, view, place));
   }
 
   private static CapVerdict.Refused refused(
       Request request, Cap.OnFluence cap, View view, View.Place place) {
-    double booked = view.sum(request.before().passes(), place);
+    double booked = view.sum(request.before().exposed(), place);
     double asked = Math.max(0, place.sum() - booked);
     String because =
         String.format(
@@ -147,7 +148,7 @@ public final class Caps {
 
   private static Optional<Standing> standing(Sample sample, SampleDose dose, Cap.OnFluence cap) {
     View view = View.of(cap, sample, Worth.UPPER);
-    List<PassDose> passes = dose.passes();
+    List<PassDose> passes = dose.exposed();
     if (passes.stream().anyMatch(pass -> view.averages().obstacle(pass.key()).isPresent())) {
       return Optional.empty();
     }

@@ -54,15 +54,14 @@ final class Ground {
     double wider = worth == Worth.UPPER ? sample.placement().uncertaintyMetres() : 0;
     Axes axes = new Axes(area.outline().turnDegrees());
     Box box = box(area, axes).grown(wider);
-    return dose.passes().stream()
+    return dose.exposed().stream()
         .filter(pass -> touches(pass, worth, widest, sample, axes, box))
         .toList();
   }
 
   private static boolean touches(
       PassDose pass, Worth worth, Averages widest, Sample sample, Axes axes, Box box) {
-    return pass.touchesAnything()
-        && pass.bounds(worth, widest, sample.placement(), axes).overlaps(box)
+    return pass.bounds(worth, widest, sample.placement(), axes).overlaps(box)
         && pass.footprints(worth, widest, sample.placement(), axes).stream()
             .anyMatch(footprint -> footprint.box().overlaps(box));
   }
@@ -79,8 +78,7 @@ final class Ground {
 
   private static Stream<CapVerdict.Refused> refusals(
       Caps.Request request, Area area, Reach reach, String what) {
-    return request.alone().passes().stream()
-        .filter(PassDose::touchesAnything)
+    return request.alone().exposed().stream()
         .filter(pass -> reach.reaches(pass, request.sample(), area))
         .map(pass -> refused(request, area, what, pass));
   }

@@ -93,7 +93,7 @@ public record JobDose(
   private static Fluence mean(SampleDose alone, Sample sample) {
     Averages averages = Averages.of(averaging(sample), sample.material());
     Map<Long, Double> byStay =
-        alone.passes().stream()
+        alone.exposed().stream()
             .collect(
                 Collectors.groupingBy(
                     pass -> pass.key().stay(),
@@ -104,9 +104,9 @@ public record JobDose(
   private static Optional<LocalFluence> highest(SampleDose alone, Sample sample, Worth worth) {
     View view = View.everywhere(averaging(sample), sample, worth);
     boolean known =
-        alone.passes().stream().allMatch(pass -> view.averages().obstacle(pass.key()).isEmpty());
+        alone.exposed().stream().allMatch(pass -> view.averages().obstacle(pass.key()).isEmpty());
     return known
-        ? view.highest(alone.passes(), alone.passes()).map(View.Place::fluence)
+        ? view.highest(alone.exposed(), alone.exposed()).map(View.Place::fluence)
         : Optional.empty();
   }
 

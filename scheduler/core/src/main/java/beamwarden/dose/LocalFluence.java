@@ -21,6 +21,7 @@ public record LocalFluence(Fluence fluence, Point at) {
   public static Fluence upperAt(
       Sample sample, SampleDose dose, Averaging averaging, Point at, double turnDegrees) {
     View view = View.everywhere(averaging, sample, Worth.UPPER);
-    return new Fluence(view.sumAt(dose.at(sample.placement()).passes(), at, new Axes(turnDegrees)));
+    return new Fluence(
+        view.sumAt(dose.at(sample.placement()).exposed(), at, new Axes(turnDegrees)));
   }
 }

@@ -91,7 +91,7 @@ final class PassDose {
 
   /** The best value of the mean fluence in e/nm². */
   double mean(Averages averages) {
-    return touchesAnything() ? shape.mean(averages.sigmaMetres(key)) : 0;
+    return shape.mean(averages.sigmaMetres(key));
   }
 
   /** Whether any electron may have landed. */

@@ -107,6 +107,11 @@ public final class SampleDose {
     return placement;
   }
 
+  /** The passes that left a footprint; what touched nothing has none. */
+  List<PassDose> exposed() {
+    return passes.stream().filter(PassDose::touchesAnything).toList();
+  }
+
   List<PassDose> passes() {
     return passes;
   }

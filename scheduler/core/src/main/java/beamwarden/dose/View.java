@@ -54,21 +54,19 @@ record View(
   /**
    * The place of the highest sum among those that some passes cover.
    *
-   * @param all every pass that is summed
+   * @param all every pass that is summed; like all passes here, such as left a footprint
    * @param covered the passes that cover the places to look at; among {@code all}
    */
   Optional<Place> highest(List<PassDose> all, Collection<PassDose> covered) {
     Set<List<Object>> seen = new HashSet<>();
     Place highest = null;
     for (PassDose pass : covered) {
-      if (pass.touchesAnything()) {
-        Axes axes = axes(pass);
-        for (Box window : outlines(pass, axes)) {
-          Optional<Place> found =
-              seen.add(List.of(axes, window)) ? highest(all, window, axes) : Optional.empty();
-          if (found.isPresent() && (highest == null || found.get().sum() > highest.sum())) {
-            highest = found.get();
-          }
+      Axes axes = axes(pass);
+      for (Box window : outlines(pass, axes)) {
+        Optional<Place> found =
+            seen.add(List.of(axes, window)) ? highest(all, window, axes) : Optional.empty();
+        if (found.isPresent() && (highest == null || found.get().sum() > highest.sum())) {
+          highest = found.get();
         }
       }
     }
@@ -95,10 +93,8 @@ record View(
 
   private boolean touches(PassDose pass, List<PassDose> asked, Axes axes) {
     Box bounds = pass.bounds(worth, averages, placement, axes);
-    return pass.touchesAnything()
-        && asked.stream()
-            .filter(PassDose::touchesAnything)
-            .anyMatch(one -> one.bounds(worth, averages, placement, axes).overlaps(bounds));
+    return asked.stream()
+        .anyMatch(one -> one.bounds(worth, averages, placement, axes).overlaps(bounds));
   }
 
   private Optional<Place> highest(List<PassDose> all, Box window, Axes axes) {
@@ -130,7 +126,6 @@ record View(
 
   private List<Footprint> near(List<PassDose> passes, Box box, Axes axes) {
     return passes.stream()
-        .filter(PassDose::touchesAnything)
         .filter(pass -> pass.bounds(worth, averages, placement, axes).overlaps(box))
         .flatMap(pass -> pass.footprints(worth, averages, placement, axes).stream())
         .toList();

@@ -270,6 +270,26 @@ class CapsTest {
     }
 
     @Test
+    void doesNotMindAnExposureThatTouchedNothing() {
+      Sample sample = sample(0, area, Fixtures.overGeneration(1e9), ownCap);
+      Delivery planned = numbered(planned(map(100, 0), sample), 100).get(0);
+      Delivery unused =
+          new Delivery(
+              planned.grant(),
+              planned.stay(),
+              planned.exposure(),
+              0,
+              Duration.ZERO,
+              Duration.ZERO,
+              planned.bestCurrent(),
+              planned.upperCurrent(),
+              planned.tolerances());
+      SampleDose dose = SampleDose.nothing(sample.placement()).plus(unused);
+      assertAdmitted(sample, dose, map(100, 0));
+      assertEquals(0, Caps.standing(sample, dose).get(0).upper());
+    }
+
+    @Test
     void isExemptForAMapTurnedOtherwiseThatLiesInside() {
       Rectangle turned = new Rectangle(Fixtures.point(100, 0), 10e-6, 10e-6, 30);
       assertAdmitted(
