@@ -17,6 +17,7 @@ import beamwarden.queue.Cap;
 import beamwarden.queue.Sample;
 import beamwarden.shift.Shift;
 import beamwarden.shift.ShiftCalendar;
+import java.time.Duration;
 import java.time.Instant;
 import java.util.ArrayList;
 import java.util.HashMap;
@@ -42,6 +43,7 @@ final class Invariants {
   private static final double ROUNDING = 1e-9;
 
   private final ShiftCalendar calendar;
+  private final Duration clockSlack;
   private final SplittableRandom random;
   private final Map<Long, Entry.GrantOpened> opened = new HashMap<>();
   private final Map<Long, Instant> openedAt = new HashMap<>();
@@ -55,7 +57,13 @@ final class Invariants {
   private int entriesSeen;
 
   Invariants(ShiftCalendar calendar, long seed) {
+    this(calendar, seed, Duration.ZERO);
+  }
+
+  /** With processes whose clocks may be apart by so much. */
+  Invariants(ShiftCalendar calendar, long seed, Duration clockSlack) {
     this.calendar = calendar;
+    this.clockSlack = clockSlack;
     this.random = new SplittableRandom(seed);
   }
 
@@ -124,7 +132,7 @@ final class Invariants {
     Entry.GrantOpened grant = opened.get(beam.grant());
     require(grant != null, "NoExposureWithoutAnEarlierGrant: " + beam);
     require(
-        !openedAt.get(beam.grant()).isAfter(beam.began()),
+        !openedAt.get(beam.grant()).isAfter(beam.began().plus(clockSlack)),
         "NoExposureWithoutAnEarlierGrant: stored after the beam came on, " + beam);
     require(
         grant.exposure().sample().equals(beam.sample()),
@@ -132,10 +140,11 @@ final class Invariants {
   }
 
   private void noExposureOutsideAShift(Beam beam) {
-    Optional<Shift> shift = calendar.current(beam.began());
+    Optional<Shift> shift = calendar.current(beam.began().plus(clockSlack));
     require(shift.isPresent(), "NoExposureOutsideAShift: " + beam);
     require(
-        !beam.ended().isAfter(shift.get().usableEnd()), "NoExposureOutsideAShift: late, " + beam);
+        !beam.ended().isAfter(shift.get().usableEnd().plus(clockSlack)),
+        "NoExposureOutsideAShift: late, " + beam);
   }
 
   /** Also says that what was voided was never exposed. */

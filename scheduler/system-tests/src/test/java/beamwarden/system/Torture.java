@@ -5,9 +5,15 @@ import beamwarden.ledger.JobRecord;
 import beamwarden.queue.JobState;
 import beamwarden.simulated.RandomFaults;
 import beamwarden.simulated.Simulation;
+import java.io.IOException;
+import java.nio.file.Files;
+import java.nio.file.Path;
+import java.util.Comparator;
 import java.util.EnumMap;
+import java.util.HashMap;
 import java.util.Map;
 import java.util.SplittableRandom;
+import java.util.stream.Stream;
 
 /** Simulated nights by seed: the same for the tests and for {@code ops/torture}. */
 final class Torture {
@@ -15,6 +21,10 @@ final class Torture {
   private static final double KILLS_PER_OPERATION = 0.002;
   private static final int SAMPLES = 3;
   private static final int JOBS = 10;
+  private static final long LINE_EVERY = 50;
+
+  /** The first seed when none is given. */
+  static final long SEED = 20310312;
 
   private Torture() {}
 
@@ -77,20 +87,57 @@ final class Torture {
     }
   }
 
-  /** {@code ROUNDS SEED}: runs that many nights, with a line for each ten. */
-  public static void main(String[] arguments) {
-    int rounds = Integer.parseInt(arguments[0]);
-    long seed = Long.parseLong(arguments[1]);
+  /**
+   * {@code --rounds N} runs nights in virtual time, {@code --processes N} rounds of real processes;
+   * {@code --seed S} is the first seed.
+   */
+  public static void main(String[] arguments) throws IOException, InterruptedException {
+    Map<String, Long> options = new HashMap<>();
+    for (int i = 0; i + 1 < arguments.length; i += 2) {
+      options.put(arguments[i], Long.parseLong(arguments[i + 1]));
+    }
+    long seed = options.getOrDefault("--seed", SEED);
+    if (options.containsKey("--processes")) {
+      processes(options.get("--processes"), seed);
+    } else {
+      rounds(options.getOrDefault("--rounds", 200L), seed);
+    }
+  }
+
+  private static void rounds(long rounds, long seed) {
     long began = System.nanoTime();
     Outcome outcome = Outcome.none();
-    for (int i = 0; i < rounds; i++) {
+    for (long i = 0; i < rounds; i++) {
       outcome = night(seed + i, outcome);
-      if ((i + 1) % 10 == 0 || i + 1 == rounds) {
+      if ((i + 1) % LINE_EVERY == 0 || i + 1 == rounds) {
         System.out.println(outcome);
       }
     }
     System.out.printf(
-        "%d nights from seed %d hold every invariant, in %.0f s%n",
-        rounds, seed, (System.nanoTime() - began) / 1e9);
+        "%d nights from seed %d hold every invariant, in %.0f s%n", rounds, seed, since(began));
+  }
+
+  private static void processes(long rounds, long seed) throws IOException, InterruptedException {
+    long began = System.nanoTime();
+    for (long i = 0; i < rounds; i++) {
+      Path folder = Files.createTempDirectory("beamwarden-torture-");
+      System.out.println(ProcessTorture.round(seed + i, folder));
+      delete(folder);
+    }
+    System.out.printf(
+        "%d rounds from seed %d hold every invariant, in %.0f s%n", rounds, seed, since(began));
+  }
+
+  /** Deletes a folder with all that is in it. */
+  static void delete(Path folder) throws IOException {
+    try (Stream<Path> paths = Files.walk(folder)) {
+      for (Path path : paths.sorted(Comparator.reverseOrder()).toList()) {
+        Files.delete(path);
+      }
+    }
+  }
+
+  private static double since(long began) {
+    return (System.nanoTime() - began) / 1e9;
   }
 }
