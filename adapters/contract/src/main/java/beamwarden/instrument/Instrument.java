@@ -45,6 +45,7 @@ import java.util.Set;
  *       current, with the meter's tolerance added, are never below what was delivered.
  *   <li><b>P14, data first.</b> Data files are forced to disk before their receipt is sent.
  *   <li><b>P15, read back.</b> Prepared conditions are read back from the instrument, not echoed.
+ *       They are read back once more before each grant begins; one that needs others never begins.
  *       Preparing sends no electron to a sample.
  *   <li><b>P16, shutdown.</b> Closing the adapter, or its process ending in order, blanks the beam.
  *   <li><b>P17, the session.</b> The chamber session's id is the same after an adapter's restart,
