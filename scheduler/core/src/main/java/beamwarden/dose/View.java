@@ -9,12 +9,12 @@ import beamwarden.queue.Area;
 import beamwarden.queue.Averaging;
 import beamwarden.queue.Cap;
 import beamwarden.queue.Sample;
-import java.util.ArrayList;
 import java.util.Collection;
 import java.util.HashSet;
 import java.util.List;
 import java.util.Optional;
 import java.util.Set;
+import java.util.stream.Collectors;
 import java.util.stream.Stream;
 
 /**
@@ -78,20 +78,19 @@ record View(
    * one they touch along other axes, where they count as the boxes around them.
    */
   List<PassDose> touched(List<PassDose> all, List<PassDose> asked) {
-    Set<Axes> axesAsked = new HashSet<>();
-    asked.forEach(pass -> axesAsked.add(axes(pass)));
-    List<PassDose> touched = new ArrayList<>(asked);
-    for (PassDose pass : all) {
-      Axes axes = axes(pass);
-      boolean elsewhere = axesAsked.size() > 1 || !axesAsked.contains(axes);
-      if (elsewhere && !asked.contains(pass) && touches(pass, asked, axes)) {
-        touched.add(pass);
-      }
-    }
-    return touched;
+    List<PassDose> somewhere = asked.stream().filter(PassDose::touchesAnything).toList();
+    Set<Axes> axesAsked = somewhere.stream().map(this::axes).collect(Collectors.toSet());
+    Stream<PassDose> elsewhere =
+        all.stream()
+            .filter(PassDose::touchesAnything)
+            .filter(pass -> !somewhere.contains(pass))
+            .filter(pass -> axesAsked.size() > 1 || !axesAsked.contains(axes(pass)))
+            .filter(pass -> touches(pass, somewhere));
+    return Stream.concat(somewhere.stream(), elsewhere).toList();
   }
 
-  private boolean touches(PassDose pass, List<PassDose> asked, Axes axes) {
+  private boolean touches(PassDose pass, List<PassDose> asked) {
+    Axes axes = axes(pass);
     Box bounds = pass.bounds(worth, averages, placement, axes);
     return asked.stream()
         .anyMatch(one -> one.bounds(worth, averages, placement, axes).overlaps(bounds));
