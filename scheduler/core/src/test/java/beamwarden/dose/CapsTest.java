@@ -122,6 +122,47 @@ class CapsTest {
       assertAdmitted(
           Fixtures.quartz(Fixtures.overGeneration(5000)), NOTHING.plus(booked), map(0, 0));
     }
+
+    @Test
+    void holdsAlongTheAxesOfEveryPassThatIsTouched() {
+      // Along its own axes the asked square is clear of the turned one's box; along those of the
+      // turned one, its own box reaches in.
+      SampleDose booked = NOTHING.plus(numbered(planned(turned()), 100));
+      Sample sample = Fixtures.quartz(Fixtures.overGeneration(1.5 * ONE_PASS));
+      refused(sample, booked, map(15, 0));
+      Sample wide = Fixtures.quartz(Fixtures.overGeneration(2.5 * ONE_PASS));
+      assertAdmitted(wide, booked, map(15, 0));
+      SampleDose both = booked.plus(numbered(planned(map(15, 0)), 200));
+      for (Standing standing : Caps.standing(wide, both)) {
+        assertTrue(standing.upper() <= standing.limit(), standing::toString);
+      }
+    }
+
+    @Test
+    void doesNotMindATurnedPassThatTouchedNothing() {
+      Delivery nothing = touchingNothing(numbered(planned(turned()), 100).get(0));
+      assertAdmitted(
+          Fixtures.quartz(Fixtures.overGeneration(2500)), NOTHING.plus(nothing), map(15, 0));
+    }
+
+    private Job turned() {
+      Rectangle outline = Fixtures.square(0, 0, 10, 10);
+      Rectangle diamond = new Rectangle(outline.centre(), 10e-6, 10e-6, 45);
+      return Fixtures.map(diamond, 1000, 1000, DWELL, 1, "green");
+    }
+
+    private Delivery touchingNothing(Delivery delivery) {
+      return new Delivery(
+          delivery.grant(),
+          delivery.stay(),
+          delivery.exposure(),
+          0,
+          Duration.ZERO,
+          Duration.ZERO,
+          delivery.bestCurrent(),
+          delivery.upperCurrent(),
+          delivery.tolerances());
+    }
   }
 
   @Nested
