@@ -27,7 +27,8 @@
  *
  * <p>Terms: a <em>rig</em> is what makes an adapter testable; its <em>beat</em> is the time in
  * which an answer surely comes; a <em>provocation</em> is a fault made on purpose; a
- * <em>stretch</em> is beam on a sample without a break that the record would show. Imports the
- * contract and JUnit.
+ * <em>stretch</em> is beam on a sample without a break that the record would show.
+ *
+ * <p>May import {@code instrument}, {@code beam}, {@code quantity}, {@code timing}, and JUnit.
  */
 package beamwarden.kit;

@@ -11,6 +11,8 @@
  * only tests read.
  *
  * <p>What is invented, the scene and its light, the wander of the current, the time until somebody
- * closes a door, is called so where it stands. May import the contract's packages.
+ * closes a door, is called so where it stands.
+ *
+ * <p>May import {@code instrument}, {@code beam}, {@code quantity} and {@code timing}.
  */
 package beamwarden.simulated;

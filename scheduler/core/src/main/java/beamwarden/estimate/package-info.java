@@ -1,6 +1,7 @@
 /**
  * Time, counts, signal and resolution to expect of a job, and what earlier runs taught about them.
- * Imports {@code physics}, {@code dose}, {@code profile}, {@code queue}, {@code beam} and {@code
- * quantity}.
+ *
+ * <p>May import {@code dose}, {@code physics}, {@code profile}, {@code queue}, {@code instrument}
+ * (abilities), {@code beam} and {@code quantity}.
  */
 package beamwarden.estimate;

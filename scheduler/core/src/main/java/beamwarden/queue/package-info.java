@@ -1,5 +1,6 @@
 /**
- * Samples, jobs, recipes and job states, and their validation. Imports {@code profile}, {@code
- * beam} and {@code quantity}.
+ * Samples with their caps, jobs, and the states of jobs.
+ *
+ * <p>May import {@code beam} and {@code quantity}.
  */
 package beamwarden.queue;

@@ -1,5 +1,6 @@
 /**
- * The settings of the daemon as records, validated once and printed with secrets masked. Imports
- * {@code shift}, {@code ledger} and {@code quantity}.
+ * The settings of the daemon as records, validated once and printed with secrets masked.
+ *
+ * <p>May import {@code ledger}, {@code shift} and {@code quantity}.
  */
 package beamwarden.config;

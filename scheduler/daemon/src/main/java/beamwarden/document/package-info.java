@@ -8,6 +8,8 @@
  * same pass. {@link beamwarden.document.Limits} bounds what a text may cost. Entry points are
  * {@link beamwarden.document.QueueDocuments} and {@link beamwarden.document.ProfileDocuments}.
  *
- * <p>Imports the core and the contract; the YAML parser and commons-text are seen nowhere else.
+ * <p>May import {@code profile}, {@code queue}, {@code shift}, {@code physics} (formulas of
+ * materials), {@code instrument} (abilities), {@code beam} and {@code quantity}. The YAML parser
+ * and commons-text are seen nowhere else.
  */
 package beamwarden.document;

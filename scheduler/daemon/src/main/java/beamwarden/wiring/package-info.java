@@ -1,5 +1,7 @@
 /**
- * The one place where concrete classes meet, in the order they start and stop. Imports everything
- * but {@code command}.
+ * The one place where concrete classes meet, in the order they start and stop.
+ *
+ * <p>May import everything but {@code command}, {@code simulated} and {@code kit}: adapters are
+ * found at run time.
  */
 package beamwarden.wiring;
