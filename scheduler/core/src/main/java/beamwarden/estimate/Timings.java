@@ -2,6 +2,7 @@ package beamwarden.estimate;
 
 import beamwarden.beam.Conditions;
 import beamwarden.beam.Exposure;
+import beamwarden.beam.Mode;
 import beamwarden.beam.Point;
 import beamwarden.instrument.Abilities;
 import beamwarden.instrument.ModeAbility;
@@ -14,13 +15,13 @@ public final class Timings {
 
   /** The time of one exposure: the start of its frame, then its scan. */
   public static Duration exposure(Exposure exposure, Abilities abilities) {
-    return frameStart(exposure, abilities).plus(exposure.scan().duration());
+    return frameStart(exposure.conditions().mode(), abilities).plus(exposure.scan().duration());
   }
 
-  /** The time before the beam comes on. */
-  public static Duration frameStart(Exposure exposure, Abilities abilities) {
-    ModeAbility mode = abilities.modes().get(exposure.conditions().mode());
-    return mode == null ? Duration.ZERO : mode.frameStart();
+  /** The time between a grant and its first electron. */
+  public static Duration frameStart(Mode mode, Abilities abilities) {
+    ModeAbility ability = abilities.modes().get(mode);
+    return ability == null ? Duration.ZERO : ability.frameStart();
   }
 
   /** The time to go from one set of conditions to another; an unknown stage counts as there. */

@@ -206,7 +206,7 @@ public final class Books {
       } else if (entry instanceof Entry.JobChanged changed) {
         jobs.computeIfPresent(changed.job(), (id, record) -> record.changed(changed, at));
       } else if (entry instanceof Entry.JobTrimmed trimmed) {
-        jobs.computeIfPresent(trimmed.job(), (id, record) -> record.trimmed(trimmed.to()));
+        jobs.computeIfPresent(trimmed.job(), (id, record) -> record.trimmed(trimmed));
       } else if (entry instanceof Entry.JobFaulted faulted) {
         jobs.computeIfPresent(faulted.job(), (id, record) -> record.faulted());
       } else if (entry instanceof Entry.GrantOpened opened) {

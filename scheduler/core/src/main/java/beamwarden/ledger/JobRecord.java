@@ -20,8 +20,10 @@ import java.util.Optional;
  * @param state where it stands
  * @param heldFor what it waits for, when it is held
  * @param because why it is in that state; may be empty
+ * @param letGoOn whether a person let it go on although a job before it ended undone
  * @param done how much of it is done
  * @param trim to what it was cut, if it was
+ * @param trimmedBecause what its caps left when it was cut; empty when it was not
  * @param coincidences coincidences counted so far, by pass
  * @param exposures how many receipts were booked for it
  * @param faultsInARow how many exposures in a row ended with a fault
@@ -34,8 +36,10 @@ public record JobRecord(
     JobState state,
     Optional<HeldFor> heldFor,
     String because,
+    boolean letGoOn,
     Done done,
     Optional<Trim> trim,
+    String trimmedBecause,
     Map<Integer, Long> coincidences,
     int exposures,
     int faultsInARow,
@@ -56,8 +60,10 @@ public record JobRecord(
         JobState.WAITING,
         Optional.empty(),
         "",
+        false,
         Done.NOTHING,
         Optional.empty(),
+        "",
         Map.of(),
         0,
         0,
@@ -72,8 +78,10 @@ public record JobRecord(
         change.state(),
         change.heldFor(),
         change.because(),
+        letGoOn || letsGoOn(change),
         done,
         trim,
+        trimmedBecause,
         coincidences,
         exposures,
         change.state() == JobState.WAITING ? 0 : faultsInARow,
@@ -81,12 +89,30 @@ public record JobRecord(
         change.state().ended() ? Optional.of(at) : Optional.empty());
   }
 
-  JobRecord trimmed(Trim to) {
-    return with(done, Optional.of(to), coincidences, exposures, faultsInARow, started);
+  private boolean letsGoOn(Entry.JobChanged change) {
+    return change.state() == JobState.WAITING && heldFor.equals(Optional.of(HeldFor.PREDECESSOR));
+  }
+
+  JobRecord trimmed(Entry.JobTrimmed cut) {
+    return new JobRecord(
+        job,
+        place,
+        state,
+        heldFor,
+        because,
+        letGoOn,
+        done,
+        Optional.of(cut.to()),
+        cut.because(),
+        coincidences,
+        exposures,
+        faultsInARow,
+        started,
+        ended);
   }
 
   JobRecord granted(Instant at) {
-    return with(done, trim, coincidences, exposures, faultsInARow, Optional.of(started.orElse(at)));
+    return with(done, coincidences, exposures, faultsInARow, Optional.of(started.orElse(at)));
   }
 
   JobRecord received(int pass, Receipt receipt) {
@@ -94,7 +120,6 @@ public record JobRecord(
     counted.merge(pass, receipt.counts().getOrDefault(COINCIDENCES, 0L), Long::sum);
     return with(
         done.plus(pass, receipt.unitsDone()),
-        trim,
         counted,
         exposures + 1,
         receipt.fault().isPresent() ? faultsInARow + 1 : 0,
@@ -102,7 +127,7 @@ public record JobRecord(
   }
 
   JobRecord faulted() {
-    return with(done, trim, coincidences, exposures, faultsInARow + 1, started);
+    return with(done, coincidences, exposures, faultsInARow + 1, started);
   }
 
   /** Whether a count that ends with enough coincidences has enough at a point. */
@@ -131,7 +156,6 @@ public record JobRecord(
 
   private JobRecord with(
       Done newDone,
-      Optional<Trim> newTrim,
       Map<Integer, Long> newCoincidences,
       int newExposures,
       int newFaults,
@@ -142,8 +166,10 @@ public record JobRecord(
         state,
         heldFor,
         because,
+        letGoOn,
         newDone,
-        newTrim,
+        trim,
+        trimmedBecause,
         newCoincidences,
         newExposures,
         newFaults,

@@ -3,6 +3,7 @@ package beamwarden.run;
 import beamwarden.beam.Conditions;
 import beamwarden.beam.Point;
 import beamwarden.instrument.CurrentReading;
+import beamwarden.plan.Readiness;
 import java.time.Instant;
 import java.util.Optional;
 
@@ -26,6 +27,11 @@ record View(
     boolean parked) {
   static final View NOTHING =
       new View(Optional.empty(), Optional.empty(), Optional.empty(), Instant.MIN, 0, false);
+
+  /** What the instrument is ready for. */
+  Readiness readiness() {
+    return new Readiness(conditions, stage, reading.map(CurrentReading::settings), readAt);
+  }
 
   View prepared(Conditions now, Point at, long newStay) {
     boolean sameBeam = conditions.map(Conditions::beam).equals(Optional.of(now.beam()));

@@ -9,15 +9,15 @@ import beamwarden.dose.Caps;
 import beamwarden.dose.Deliveries;
 import beamwarden.dose.Delivery;
 import beamwarden.dose.Done;
-import beamwarden.dose.Exposures;
 import beamwarden.estimate.Timings;
 import beamwarden.instrument.Abilities;
-import beamwarden.instrument.CurrentReading;
 import beamwarden.instrument.InstrumentEvent;
 import beamwarden.ledger.Entry;
 import beamwarden.ledger.Entry.Noted.What;
 import beamwarden.ledger.JobRecord;
 import beamwarden.ledger.SampleRecord;
+import beamwarden.plan.Fitting;
+import beamwarden.plan.Readiness;
 import beamwarden.queue.JobState;
 import beamwarden.shift.Shift;
 import java.time.Duration;
@@ -29,25 +29,20 @@ import java.util.Optional;
  * store the grant.
  */
 final class WorkSteps {
-  /** How far a read-back of the stage may be from where it was sent, its repeatability apart. */
-  private static final double STAGE_ROUNDING_METRES = 1e-9;
-
-  /** Longer than any exposure. */
-  private static final Duration ENDLESS = Duration.ofDays(10_000);
-
   private final RunSetup setup;
   private final JobSteps jobs;
+  private final Fitting fitting;
 
   WorkSteps(RunSetup setup) {
     this.setup = setup;
     this.jobs = new JobSteps(setup);
+    this.fitting = new Fitting(setup.profile().abilities());
   }
 
   /** Starts the next piece of work; false when the shift has none. */
   boolean decide(Turn turn, Shift shift) {
     for (JobRecord record : setup.planner().order(turn.books.jobs(), turn.now)) {
-      SampleRecord sample = turn.books.sample(record.job().sample()).orElseThrow();
-      if (jobs.settle(turn, record, nothingLeft(record, sample))) {
+      if (jobs.settle(turn, record)) {
         return true;
       }
       if (jobs.mayRun(turn, record) && expose(turn, record, shift)) {
@@ -59,89 +54,36 @@ final class WorkSteps {
 
   private boolean expose(Turn turn, JobRecord record, Shift shift) {
     SampleRecord sample = turn.books.sample(record.job().sample()).orElseThrow();
-    Optional<Exposure> exposure = fitting(turn, record, record.effectiveDone(), sample, shift);
-    if (exposure.isEmpty()) {
+    Optional<Fitting.Piece> piece =
+        fitting.next(
+            record.job(),
+            sample.sample(),
+            record.effectiveDone(),
+            record.trim(),
+            turn.view.readiness(),
+            shift,
+            turn.books.beamOnThisShift(),
+            turn.now);
+    if (piece.isEmpty()) {
       return false;
     }
     turn.standingBy = "";
-    if (!prepared(turn, exposure.get())) {
-      prepare(turn, record, exposure.get());
-    } else if (readingFor(turn, exposure.get(), turn.now).isEmpty()) {
-      measure(turn, record, exposure.get());
+    Exposure exposure = piece.get().exposure();
+    if (!turn.view.readiness().isAt(exposure, abilities())) {
+      prepare(turn, record, piece.get());
+    } else if (!turn.view.readiness().hasReading(exposure, turn.now, abilities())) {
+      measure(turn, record, exposure);
     } else {
-      grant(turn, record, sample, exposure.get());
+      grant(turn, record, sample, exposure);
     }
     return true;
   }
 
-  /** The next exposure of a job that can still end before the shift's wind-down, if any. */
-  private Optional<Exposure> fitting(
-      Turn turn, JobRecord record, Done done, SampleRecord sample, Shift shift) {
-    Optional<Exposure> whole = next(record, done, sample, ENDLESS);
-    if (whole.isEmpty()) {
-      return whole;
-    }
-    Instant start = turn.now.plus(before(turn, whole.get()));
-    if (shift.latestStart().filter(start::isAfter).isPresent()) {
-      return Optional.empty();
-    }
-    Instant end =
-        record.job().deadline().filter(shift.usableEnd()::isAfter).orElse(shift.usableEnd());
-    Duration left =
-        Duration.between(start, end)
-            .minus(Timings.frameStart(whole.get(), abilities()))
-            .minus(abilities().blanker().alone().orElse(Duration.ZERO));
-    Duration budget =
-        shift.beamOnBudget().map(most -> most.minus(turn.books.beamOnThisShift())).orElse(ENDLESS);
-    Duration most = left.compareTo(budget) < 0 ? left : budget;
-    return most.isNegative() || most.isZero() ? Optional.empty() : next(record, done, sample, most);
-  }
-
-  private Optional<Exposure> next(
-      JobRecord record, Done done, SampleRecord sample, Duration longest) {
-    return Exposures.next(record.job(), sample.sample(), abilities(), done, record.trim(), longest);
-  }
-
-  /** Whether a job has nothing left to expose. */
-  boolean nothingLeft(JobRecord record, SampleRecord sample) {
-    return Exposures.next(
-            record.job(), sample.sample(), abilities(), record.effectiveDone(), record.trim())
-        .isEmpty();
-  }
-
-  /** The time before an exposure can begin. */
-  private Duration before(Turn turn, Exposure exposure) {
-    Duration preparation = prepared(turn, exposure) ? Duration.ZERO : preparation(turn, exposure);
-    Duration reading =
-        readingFor(turn, exposure, turn.now).isPresent()
-            ? Duration.ZERO
-            : abilities().meter().readingTakes();
-    return preparation.plus(reading);
-  }
-
-  private Duration preparation(Turn turn, Exposure exposure) {
-    return Timings.preparation(
-        turn.view.conditions(),
-        turn.view.stage(),
-        exposure.conditions(),
-        exposure.stageTarget(),
-        abilities());
-  }
-
-  private boolean prepared(Turn turn, Exposure exposure) {
-    double tolerance = abilities().stage().repeatabilityMetres() + STAGE_ROUNDING_METRES;
-    return turn.view.conditions().equals(Optional.of(exposure.conditions()))
-        && turn.view
-            .stage()
-            .filter(at -> at.distanceMetres(exposure.stageTarget()) <= tolerance)
-            .isPresent();
-  }
-
-  private void prepare(Turn turn, JobRecord record, Exposure exposure) {
-    Conditions conditions = exposure.conditions();
-    Point target = exposure.stageTarget();
+  private void prepare(Turn turn, JobRecord record, Fitting.Piece piece) {
+    Conditions conditions = piece.exposure().conditions();
+    Point target = piece.exposure().stageTarget();
     long request = turn.nextRequest();
-    Instant due = turn.now.plus(preparation(turn, exposure)).plus(setup.waits().answerWithin());
+    Instant due = turn.now.plus(piece.preparation()).plus(setup.waits().answerWithin());
     turn.doing = new Doing.Preparing(request, record.job().id(), conditions, target, due);
     turn.send(new Command.Prepare(request, conditions, target));
   }
@@ -154,24 +96,11 @@ final class WorkSteps {
     turn.send(new Command.Measure(request));
   }
 
-  /** The reading on which a grant may rest: it must still hold when the exposure ends. */
-  private Optional<CurrentReading> readingFor(Turn turn, Exposure exposure, Instant start) {
-    Instant end = start.plus(Timings.exposure(exposure, abilities()));
-    Instant expires =
-        turn.view.reading().isEmpty()
-            ? Instant.MIN
-            : turn.view.readAt().plus(abilities().meter().readingEvery());
-    return turn.view
-        .reading()
-        .filter(reading -> reading.settings().equals(exposure.conditions().beam()))
-        .filter(reading -> !end.isAfter(expires));
-  }
-
   private void grant(Turn turn, JobRecord record, SampleRecord sample, Exposure exposure) {
     Delivery inFull = planned(turn, exposure, turn.books.lastGrant() + 1);
     CapVerdict verdict = Caps.admit(sample.sample(), sample.dose(), inFull);
     if (verdict instanceof CapVerdict.Refused refused) {
-      jobs.stopAtCap(turn, record, refused);
+      JobSteps.stopAtCap(turn, record, refused);
       return;
     }
     if (record.state() != JobState.RUNNING) {
@@ -207,12 +136,20 @@ final class WorkSteps {
     JobRecord record = turn.books.job(running.job()).orElseThrow();
     SampleRecord sample = turn.books.sample(running.sample()).orElseThrow();
     Done done = record.effectiveDone().plus(running.pass(), running.scan().units());
-    Duration left = Timings.exposure(running, abilities());
-    Instant start = turn.now.plus(left);
-    fitting(turn, record, done, sample, shift)
-        .filter(next -> prepared(turn, next))
-        .filter(next -> readingFor(turn, next, start).isPresent())
-        .filter(next -> endsInTime(next, start, shift))
+    Instant start = turn.now.plus(Timings.exposure(running, abilities()));
+    Duration beamOn = turn.books.beamOnThisShift().plus(slot.opened().longestBeamOn());
+    fitting
+        .next(
+            record.job(),
+            sample.sample(),
+            done,
+            record.trim(),
+            turn.view.readiness(),
+            shift,
+            beamOn,
+            start)
+        .filter(piece -> piece.before().isZero())
+        .map(Fitting.Piece::exposure)
         .filter(next -> !(next.scan() instanceof SpotScan) || next.pass() == running.pass())
         .map(next -> planned(turn, next, turn.books.lastGrant() + 1))
         .filter(
@@ -220,20 +157,14 @@ final class WorkSteps {
         .ifPresent(next -> turn.next = Optional.of(open(turn, next)));
   }
 
-  private boolean endsInTime(Exposure next, Instant start, Shift shift) {
-    Instant end = start.plus(Timings.exposure(next, abilities()));
-    return !end.isAfter(shift.usableEnd());
-  }
-
   void prepared(Turn turn, InstrumentEvent.Prepared prepared) {
     if (!(turn.doing instanceof Doing.Preparing wanted) || wanted.request() != prepared.request()) {
       return;
     }
     turn.doing = new Doing.Nothing();
-    double off = prepared.stage().distanceMetres(wanted.stage());
     boolean there =
         prepared.conditions().equals(wanted.conditions())
-            && off <= abilities().stage().repeatabilityMetres() + STAGE_ROUNDING_METRES;
+            && Readiness.samePlace(prepared.stage(), wanted.stage(), abilities());
     if (!there) {
       turn.view = turn.view.unprepared();
       turn.note(
