@@ -5,6 +5,7 @@ import beamwarden.dose.CapVerdict;
 import beamwarden.dose.Caps;
 import beamwarden.dose.Deliveries;
 import beamwarden.dose.Delivery;
+import beamwarden.dose.Receiving;
 import beamwarden.instrument.Abilities;
 import beamwarden.instrument.Receipt;
 import beamwarden.ledger.Books;
@@ -188,7 +189,7 @@ public final class Walk {
     }
     write(new Entry.GrantOpened(inFull, inFull.upperBeamOn(), SESSION));
     now = now.plus(piece.exposing());
-    write(new Entry.GrantBooked(inFull, asGranted(inFull)));
+    write(booked(inFull));
     visit(record.job().id(), shift, piece, begins);
   }
 
@@ -197,6 +198,13 @@ public final class Walk {
     boolean still =
         at.stage().equals(Optional.of(exposure.stageTarget())) && piece.reading().isZero();
     return still && stay > 0 ? stay : books.lastGrant() + 1;
+  }
+
+  /** Booked as the run would: the time to blank was granted, and not used. */
+  private Entry booked(Delivery inFull) {
+    Receipt receipt = asGranted(inFull);
+    Receiving received = Deliveries.received(inFull, receipt, abilities.meter());
+    return new Entry.GrantBooked(((Receiving.Believed) received).delivered(), receipt);
   }
 
   private static Receipt asGranted(Delivery inFull) {

@@ -115,6 +115,9 @@ final class Invariants {
       counted.put(grant.grant(), grant.inFull());
       states.put(grant.grant(), GrantState.OPEN);
     } else if (entry instanceof Entry.GrantBooked booked) {
+      if (states.get(booked.delivered().grant()) == GrantState.BOOKED) {
+        guaranteesLeft.add(booked.chain()); // A later reading raised it: the current had left them.
+      }
       counted.put(booked.delivered().grant(), booked.delivered());
       states.put(booked.delivered().grant(), GrantState.BOOKED);
     } else if (entry instanceof Entry.GrantPresumed presumed) {
