@@ -46,7 +46,7 @@ class ArchitectureTest {
           scheduler/core     | ledger     | dose queue instrument beam quantity timing  |
           scheduler/core     | estimate   | dose physics profile queue \
                                             instrument beam quantity                    |
-          scheduler/core     | plan       | estimate ledger dose profile queue shift \
+          scheduler/core     | plan       | estimate ledger dose queue shift instrument \
                                             beam quantity                               |
           scheduler/core     | run        | plan estimate ledger dose profile queue shift \
                                             instrument beam quantity timing             | slf4j
@@ -61,7 +61,7 @@ class ArchitectureTest {
                                             instrument beam quantity                    | jackson
           scheduler/daemon   | web.api    | answer document report run plan ledger profile queue \
                                             shift instrument                            | jackson
-          scheduler/daemon   | web.stream | web.api answer run ledger                   |
+          scheduler/daemon   | web.stream | web.api answer run ledger                   | slf4j
           scheduler/daemon   | web        | web.api web.stream run                      | undertow slf4j
           scheduler/daemon   | wiring     | web web.api web.stream answer document config clockwork store \
                                             report run plan estimate ledger dose physics profile \
