@@ -18,6 +18,9 @@ import beamwarden.shift.ShiftCalendar;
 import beamwarden.store.SqliteJournal;
 import beamwarden.timing.PacedTime;
 import beamwarden.timing.TimeAnchor;
+import beamwarden.web.WebServer;
+import beamwarden.web.WebSettings;
+import java.net.URI;
 import java.nio.file.Path;
 import java.time.Duration;
 import java.time.Instant;
@@ -47,22 +50,29 @@ public final class NightDaemon implements AutoCloseable {
   private final Instrument instrument;
   private final EngineThread engine;
   private final QuartzClock clock;
+  private final WebServer web;
+  private final ServeFolder folder;
+  private final URI address;
 
   /**
    * What a daemon is started with.
    *
    * @param profile the instrument profile
+   * @param profileHash the hash of its document
    * @param store the store's folder
    * @param pace how many times faster than real time, if a new store is to be paced
    * @param from when a new store's line of time begins, if not now
    * @param seed the seed of a simulated instrument, if not its own
+   * @param port the port on loopback; 0 for any that is free
    */
   public record Start(
       Profile profile,
+      String profileHash,
       Path store,
       OptionalDouble pace,
       Optional<Instant> from,
-      OptionalLong seed) {}
+      OptionalLong seed,
+      int port) {}
 
   /** Starts a daemon. */
   public static NightDaemon start(Start start) {
@@ -80,6 +90,7 @@ public final class NightDaemon implements AutoCloseable {
 
   private NightDaemon(Start start, ServeFolder folder, SqliteJournal journal, TimeAnchor anchor) {
     this.journal = journal;
+    this.folder = folder;
     this.line = new PacedTime(anchor, "line-of-time");
     this.instrument = instrument(start, folder, anchor);
     AtomicReference<QuartzClock> armed = new AtomicReference<>();
@@ -97,6 +108,11 @@ public final class NightDaemon implements AutoCloseable {
             line, anchor, new WallClock(InstantSource.system(), line::wallStep), new Waking());
     armed.set(clock);
     engine.enqueue(new Event.Woken());
+    this.web =
+        new WebServer(
+            engine, new WebSettings(start.port(), folder.readOrMakeToken(), start.profileHash()));
+    this.address = web.start();
+    folder.writeAddress(address.toString());
   }
 
   private static void arm(QuartzClock clock, List<Wake> wakes) {
@@ -126,6 +142,11 @@ public final class NightDaemon implements AutoCloseable {
     return engine;
   }
 
+  /** Where it answers. */
+  public URI address() {
+    return address;
+  }
+
   /** Hands what the clock notices over to the engine. */
   private final class Waking implements ClockListener {
     @Override
@@ -146,6 +167,8 @@ public final class NightDaemon implements AutoCloseable {
 
   @Override
   public void close() {
+    folder.forgetAddress();
+    web.close();
     clock.close();
     instrument.close();
     engine.close();

@@ -62,6 +62,24 @@ record ServeFolder(Path root) {
     }
   }
 
+  /** Tells clients where the daemon answers; only once it does. */
+  void writeAddress(String address) {
+    try {
+      writePrivately(address(), address + "\n");
+    } catch (IOException failure) {
+      throw new WiringException(address() + " cannot be written: " + failure.getMessage());
+    }
+  }
+
+  /** The daemon no longer answers. */
+  void forgetAddress() {
+    try {
+      Files.deleteIfExists(address());
+    } catch (IOException failure) {
+      throw new WiringException(address() + " cannot be deleted: " + failure.getMessage());
+    }
+  }
+
   /** Writes a file whole, readable by its owner only. */
   static void writePrivately(Path file, String text) throws IOException {
     Path fresh = file.resolveSibling(file.getFileName() + ".new");

@@ -62,7 +62,7 @@ class ArchitectureTest {
           scheduler/daemon   | web.api    | answer document report run plan ledger profile queue \
                                             shift instrument                            | jackson
           scheduler/daemon   | web.stream | web.api answer run ledger                   | slf4j
-          scheduler/daemon   | web        | web.api web.stream run                      | undertow slf4j
+          scheduler/daemon   | web        | web.api web.stream run ledger               | undertow slf4j
           scheduler/daemon   | wiring     | web web.api web.stream answer document config clockwork store \
                                             report run plan estimate ledger dose physics profile \
                                             queue shift bridge instrument beam quantity timing      | jackson slf4j
