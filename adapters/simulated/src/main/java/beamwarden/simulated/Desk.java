@@ -148,7 +148,8 @@ final class Desk {
    * {@linkplain #hasEnded() ended}. What strikes in the middle of an exposure is only answered.
    */
   Optional<FaultPlan.Strike> strike(FaultPlan.Step step) {
-    long number = hardware.exposed() + (running().isPresent() ? 0 : 1);
+    boolean begun = turns.exposing().filter(Exposing::hasBegun).isPresent();
+    long number = hardware.exposed() + (begun ? 0 : 1);
     Optional<FaultPlan.Strike> strike = faults().at(step, number);
     if (step != FaultPlan.Step.MID_EXPOSURE) {
       strike.ifPresent(struck -> happen(struck.mishap()));

@@ -33,13 +33,25 @@ final class DurableFile {
         () -> {
           try (FileChannel channel =
               FileChannel.open(file, StandardOpenOption.CREATE, StandardOpenOption.APPEND)) {
-            writeAll(channel, text(lines));
+            writeAll(channel, text(lines), true);
           }
         });
   }
 
-  /** Replaces everything at once: after a crash the file holds the old lines or the new ones. */
+  /**
+   * Replaces everything at once and forces it: the file holds the old lines or the new ones, even
+   * after a power failure.
+   */
   void replace(List<String> lines) {
+    exchange(lines, true);
+  }
+
+  /** Replaces everything at once, safe from the end of this process only. */
+  void replaceQuickly(List<String> lines) {
+    exchange(lines, false);
+  }
+
+  private void exchange(List<String> lines, boolean forced) {
     Path fresh = file.resolveSibling(file.getFileName() + ".new");
     doing(
         () -> {
@@ -49,11 +61,13 @@ final class DurableFile {
                   StandardOpenOption.CREATE,
                   StandardOpenOption.TRUNCATE_EXISTING,
                   StandardOpenOption.WRITE)) {
-            writeAll(channel, text(lines));
+            writeAll(channel, text(lines), forced);
           }
           Files.move(
               fresh, file, StandardCopyOption.ATOMIC_MOVE, StandardCopyOption.REPLACE_EXISTING);
-          forceFolder();
+          if (forced) {
+            forceFolder();
+          }
         });
   }
 
@@ -82,12 +96,15 @@ final class DurableFile {
     }
   }
 
-  private static void writeAll(FileChannel channel, String text) throws IOException {
+  private static void writeAll(FileChannel channel, String text, boolean forced)
+      throws IOException {
     ByteBuffer bytes = ByteBuffer.wrap(text.getBytes(StandardCharsets.UTF_8));
     while (bytes.hasRemaining()) {
       channel.write(bytes);
     }
-    channel.force(true);
+    if (forced) {
+      channel.force(true);
+    }
   }
 
   private static String text(List<String> lines) {

@@ -38,6 +38,7 @@ final class Exposing implements Order {
   private final Hardware hardware;
   private final Lookout lookout;
   private Runnable done = () -> {};
+  private boolean begun;
   private boolean running;
   private Instant firstElectron = Instant.MAX;
 
@@ -51,6 +52,11 @@ final class Exposing implements Order {
 
   Grant grant() {
     return grant;
+  }
+
+  /** Whether it is noted that it began. */
+  boolean hasBegun() {
+    return begun;
   }
 
   /** Whether the scan engine runs under it. */
@@ -72,6 +78,7 @@ final class Exposing implements Order {
       return;
     }
     desk.notes().begun(grant.number());
+    begun = true;
     hardware.countExposure();
     Optional<FaultPlan.Strike> strike = desk.strike(FaultPlan.Step.AFTER_BEGUN_NOTE);
     if (!desk.hasEnded()) {

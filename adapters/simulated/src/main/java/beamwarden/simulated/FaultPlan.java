@@ -14,8 +14,8 @@ public interface FaultPlan {
    * What goes wrong at a step.
    *
    * @param step the step that is about to be done, or was just done
-   * @param exposed the number of the grant among all that were ever exposed here, from 1 on: the
-   *     running one, or the next one when none is running
+   * @param exposed the number of the grant among all that were ever exposed here, from 1 on: of the
+   *     one that has begun and not ended, else of the next one
    */
   Optional<Strike> at(Step step, long exposed);
 

@@ -10,9 +10,13 @@ import java.time.Instant;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
+import org.slf4j.Logger;
+import org.slf4j.LoggerFactory;
 
 /** What a real instrument remembers by itself. Owned by {@link Hardware}. */
 final class HardwareState {
+  private static final Logger LOGGER = LoggerFactory.getLogger(HardwareState.class);
+
   /** When the instrument was first switched on. */
   Instant opened;
 
@@ -84,8 +88,20 @@ final class HardwareState {
     return Words.line(words);
   }
 
-  static HardwareState read(String line) {
-    Words words = Words.of(line);
+  /**
+   * What was written last; empty when nothing was, or when it cannot be read. Then the instrument
+   * was off in between, and begins anew with another chamber session.
+   */
+  static Optional<HardwareState> remembered(List<String> lines) {
+    try {
+      return lines.stream().findFirst().map(line -> read(Words.of(line)));
+    } catch (IllegalArgumentException damaged) {
+      LOGGER.warn("the simulated hardware has lost its memory: {}", damaged.getMessage());
+      return Optional.empty();
+    }
+  }
+
+  private static HardwareState read(Words words) {
     HardwareState state = new HardwareState(Instant.parse(words.text()));
     state.session = words.whole();
     state.stage = new Point(words.number(), words.number());

@@ -1,6 +1,5 @@
 package beamwarden.simulated;
 
-import java.util.Map;
 import java.util.OptionalLong;
 import java.util.TreeMap;
 
@@ -36,10 +35,8 @@ final class Heartbeats {
 
   /** When a heartbeat came, if it did. */
   OptionalLong arrival(long number) {
-    Map.Entry<Long, Long> entry = arrivals.floorEntry(number);
-    return entry == null || entry.getKey() != number
-        ? OptionalLong.empty()
-        : OptionalLong.of(entry.getValue());
+    Long came = arrivals.get(number);
+    return came == null ? OptionalLong.empty() : OptionalLong.of(came);
   }
 
   /** When the last one came, in this connection or an earlier one. */

@@ -46,8 +46,8 @@ public final class SimulatedProvider implements AdapterProvider {
             simulation,
             time,
             DeliveredRecord.in(folder.resolve("delivered.jsonl")),
-            memory.lines().stream().findFirst().map(HardwareState::read),
-            state -> memory.replace(List.of(state.line())));
+            HardwareState.remembered(memory.lines()),
+            state -> memory.replaceQuickly(List.of(state.line())));
     return opened(setting, simulation, time, hardware, Notes.in(folder.resolve("adapter.notes")));
   }
 

@@ -13,6 +13,7 @@ import beamwarden.instrument.StopWhen;
 import java.time.Duration;
 import java.util.List;
 import java.util.Map;
+import java.util.Optional;
 import java.util.Set;
 import org.junit.jupiter.api.Nested;
 import org.junit.jupiter.api.Test;
@@ -56,7 +57,7 @@ class EndingTest {
       session.expose(session.map(1, 500));
       session.pass(Duration.ofSeconds(1));
       session.instrument.stop(StopWhen.AT_BOUNDARY);
-      session.pass(Duration.ofMinutes(1));
+      session.pass(Duration.ZERO);
       assertEquals(0, session.receipt().unitsTouched());
       assertEquals(List.of(), session.truth.stretches());
     }
@@ -106,6 +107,26 @@ class EndingTest {
       session.instrument.heartbeat(1);
       session.pass(Duration.ofMinutes(20));
       assertEquals(Duration.ofSeconds(40), session.receipt().beamOn());
+    }
+
+    @Test
+    void isNotRenewedByTheSameHeartbeatAgain() {
+      session.expose(leased(session.spot(1, Duration.ofMinutes(10)), Duration.ofSeconds(40)));
+      long last = session.beat();
+      session.pass(Duration.ofSeconds(30));
+      session.instrument.heartbeat(last);
+      session.pass(Duration.ofMinutes(20));
+      assertEquals(Duration.ofSeconds(40), session.receipt().beamOn());
+    }
+
+    @Test
+    void isRenewedByTheFirstHeartbeatOfANewConnection() {
+      session.expose(leased(session.spot(1, Duration.ofMinutes(10)), Duration.ofSeconds(40)));
+      session.pass(Duration.ofSeconds(30));
+      session.connect();
+      session.instrument.heartbeat(1);
+      session.pass(Duration.ofMinutes(20));
+      assertEquals(Duration.ofSeconds(70), session.receipt().beamOn());
     }
 
     @Test
@@ -191,6 +212,41 @@ class EndingTest {
     }
 
     @Test
+    void aHandOverNeedsAHigherFence() {
+      session.instrument.seal(session.fence(), "store-b", Set.of(), true);
+      session.pass(Duration.ZERO);
+      assertEquals(1, session.all(InstrumentEvent.SealRefused.class).size());
+    }
+
+    @Test
+    void anotherStoreMayUseTheNumbersOfTheFirst() {
+      Grant refused = session.map(1, 10);
+      session.instrument.begin(session.fresh(refused));
+      session.pass(Duration.ZERO);
+      assertEquals(1, session.all(InstrumentEvent.NotBegun.class).size());
+      session.instrument.seal(50, "store-b", Set.of(), true);
+      session.prepareFor(refused.exposure());
+      session.instrument.begin(ofStoreB(session.fresh(refused)));
+      session.pass(Duration.ofMinutes(1));
+      assertEquals(10, session.receipt().unitsDone());
+    }
+
+    private static Grant ofStoreB(Grant grant) {
+      return new Grant(
+          grant.number(),
+          "store-b",
+          50,
+          grant.session(),
+          grant.exposure(),
+          grant.longestBeamOn(),
+          grant.highestCurrent(),
+          grant.heartbeat(),
+          grant.latestStart(),
+          grant.lease(),
+          grant.chainHead());
+    }
+
+    @Test
     void aSealThatIsRefusedLeavesTheExposureAlone() {
       session.expose(session.spot(1, Duration.ofSeconds(30)));
       session.instrument.seal(50, "store-b", Set.of(), false);
@@ -250,14 +306,28 @@ class EndingTest {
   void windingDownBlanksAndClosesTheValve() {
     session.expose(session.spot(1, Duration.ofMinutes(10)));
     session.pass(Duration.ofSeconds(10));
+    session.instrument.begin(session.fresh(session.spot(3, Duration.ofSeconds(1))));
     session.instrument.windDown();
     session.pass(Duration.ofMinutes(1));
+    assertEquals(3, session.last(InstrumentEvent.NotBegun.class).grant());
     InstrumentEvent.WoundDown wound = session.last(InstrumentEvent.WoundDown.class);
     assertTrue(wound.readings().beamBlanked() && wound.readings().valveClosed());
     assertEquals(Duration.ofSeconds(10), session.receipt().beamOn());
     session.instrument.begin(session.fresh(session.spot(2, Duration.ofSeconds(1))));
     session.pass(Duration.ofMinutes(1));
     assertEquals(2, session.last(InstrumentEvent.NotBegun.class).grant());
+  }
+
+  @Test
+  void aNewConnectionDropsWhatTheOldOneAskedFor() {
+    session.prepare(Lab.VIOLET, Lab.MIDDLE);
+    session.instrument.measure(8);
+    session.instrument.prepare(9, Lab.COUNTING, Lab.MIDDLE);
+    session.pass(Duration.ofSeconds(1));
+    session.connect();
+    session.pass(Duration.ofHours(1));
+    assertEquals(Optional.of(Lab.VIOLET), session.hardware.readings().conditions());
+    assertEquals(List.of(), session.all(InstrumentEvent.Measured.class));
   }
 
   @Test

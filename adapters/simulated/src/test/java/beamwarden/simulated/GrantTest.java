@@ -70,6 +70,15 @@ class GrantTest {
     }
 
     @Test
+    void neverExposesAGrantTwiceThatCameTwiceWhileItWaited() {
+      session.expose(session.map(5, 10));
+      session.instrument.begin(session.fresh(session.map(6, 10)));
+      session.instrument.begin(session.fresh(session.map(6, 10)));
+      session.pass(Duration.ofMinutes(1));
+      assertEquals(2, session.truth.stretches().size());
+    }
+
+    @Test
     void saysTheReceiptAgainWhenTheGrantComesAgain() {
       Grant grant = session.map(5, 10);
       session.expose(grant);
@@ -208,6 +217,27 @@ class GrantTest {
     }
   }
 
+  @Test
+  void refusesToBeginWhenTheLeaseIsOverAlready() {
+    Grant grant = session.map(1, 10);
+    session.prepareFor(grant.exposure());
+    Grant late = session.fresh(grant);
+    session.pass(Session.LEASE.plusSeconds(1));
+    session.instrument.begin(lasting(late, Duration.ofDays(1)));
+    session.pass(Duration.ofMinutes(1));
+    assertNeverBegun(1, FaultKind.LEASE_ENDED);
+  }
+
+  @Test
+  void refusesToBeginWithoutHighVoltage() {
+    Grant grant = session.map(1, 10);
+    session.prepareFor(grant.exposure());
+    session.hardware.tripHighVoltage();
+    session.instrument.begin(session.fresh(grant));
+    session.pass(Duration.ofMinutes(1));
+    assertNeverBegun(1, FaultKind.HIGH_VOLTAGE_TRIP);
+  }
+
   @Nested
   class TheFence {
     @Test
@@ -328,6 +358,21 @@ class GrantTest {
     List<InstrumentEvent.Progress> told = session.all(InstrumentEvent.Progress.class);
     assertTrue(told.size() >= 5 && told.size() <= 20, () -> told.size() + " events");
     assertFalse(told.stream().anyMatch(one -> one.unitsDone() > 500));
+  }
+
+  private static Grant lasting(Grant grant, Duration latestStart) {
+    return new Grant(
+        grant.number(),
+        grant.store(),
+        grant.fence(),
+        grant.session(),
+        grant.exposure(),
+        grant.longestBeamOn(),
+        grant.highestCurrent(),
+        grant.heartbeat(),
+        latestStart,
+        grant.lease(),
+        grant.chainHead());
   }
 
   private void assertNeverBegun(long grant, FaultKind kind) {

@@ -2,6 +2,7 @@ package beamwarden.simulated;
 
 import static org.junit.jupiter.api.Assertions.assertEquals;
 import static org.junit.jupiter.api.Assertions.assertFalse;
+import static org.junit.jupiter.api.Assertions.assertNotEquals;
 import static org.junit.jupiter.api.Assertions.assertThrows;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
@@ -166,6 +167,16 @@ class ProviderTest {
     Path notes = folder.resolve("adapter.notes");
     Files.writeString(notes, Files.readString(notes).replace("begun 1", "begun 7"));
     assertThrows(IllegalArgumentException.class, () -> open(Map.of("noise", "off")));
+  }
+
+  @Test
+  void hardwareThatLostItsMemoryBeginsAnotherSession() throws IOException {
+    connect(open(Map.of("noise", "off")));
+    String before = last(InstrumentEvent.Connected.class).session();
+    Files.writeString(folder.resolve("hardware.notes"), "not what was written\n");
+    laterProcess(Duration.ofHours(1));
+    connect(open(Map.of("noise", "off")));
+    assertNotEquals(before, last(InstrumentEvent.Connected.class).session());
   }
 
   @Test

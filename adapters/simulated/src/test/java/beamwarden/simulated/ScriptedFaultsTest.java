@@ -8,6 +8,7 @@ import beamwarden.instrument.FaultKind;
 import beamwarden.instrument.InstrumentEvent;
 import beamwarden.instrument.Receipt;
 import java.time.Duration;
+import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
 import java.util.Set;
@@ -82,6 +83,35 @@ class ScriptedFaultsTest {
         session.truth.stretches().stream().mapToDouble(Stretch::currentAmperes).max().orElseThrow();
     double shown = session.receipt().highestCurrent().orElseThrow().current().amperes();
     assertTrue(truth > Session.highest(Lab.COUNTING).amperes() && shown >= truth);
+  }
+
+  @Test
+  void everyStepKnowsTheNumberOfItsExposure() {
+    List<String> asked = new ArrayList<>();
+    FaultPlan listening =
+        (step, exposed) -> {
+          asked.add(exposed + " " + step);
+          return Optional.empty();
+        };
+    Simulation simulation = Simulation.inMemory(1).withoutNoise().with(listening);
+    Session session = new Session(simulation).ready();
+    exposeTwo(session);
+    assertEquals(
+        List.of(
+            "1 SEAL",
+            "1 PREPARE",
+            "1 BEFORE_BEGUN_NOTE",
+            "1 AFTER_BEGUN_NOTE",
+            "1 MID_EXPOSURE",
+            "1 BEFORE_RECEIPT_KEPT",
+            "1 AFTER_RECEIPT_KEPT",
+            "2 PREPARE",
+            "2 BEFORE_BEGUN_NOTE",
+            "2 AFTER_BEGUN_NOTE",
+            "2 MID_EXPOSURE",
+            "2 BEFORE_RECEIPT_KEPT",
+            "2 AFTER_RECEIPT_KEPT"),
+        asked);
   }
 
   @Test
