@@ -77,6 +77,30 @@ class DetectorTest {
   }
 
   @Test
+  void laterLinesShowTheirOwnPlaces() {
+    RasterScan later =
+        new RasterScan(
+            Session.raster(500).frame(),
+            1000,
+            500,
+            300,
+            10,
+            Duration.ofNanos(25_000),
+            Duration.ZERO);
+    Scene scene = new Scene(3, "sst-07", "violet", true);
+    double[] yields = new double[1000];
+    double expected = 0;
+    for (int line = 0; line < 10; line++) {
+      scene.line(later, 300 + line, yields);
+      expected += Arrays.stream(yields).sum();
+    }
+    expected *= Lab.GENTLE.current().electronsIn(Duration.ofNanos(25_000));
+    Grant grant = session.grant(8, Lab.VIOLET, later);
+    long counted = writing().count(grant, 10, Lab.GENTLE.current()).counts().get("violet");
+    assertEquals(expected, (double) counted, 5 * Math.sqrt(expected));
+  }
+
+  @Test
   void countsTheExpectedWithoutNoise() {
     Detector exact = new Detector(Simulation.inMemory(3).withoutNoise(), Optional.empty());
     Grant grant = session.map(7, 500);

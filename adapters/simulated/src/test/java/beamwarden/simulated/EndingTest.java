@@ -63,6 +63,20 @@ class EndingTest {
     }
 
     @Test
+    void leavesNothingBehindThatEndsTheNextExposure() {
+      session.expose(session.spot(1, Duration.ofMinutes(20)));
+      session.pass(Duration.ofSeconds(10));
+      session.instrument.stop(StopWhen.NOW);
+      session.pass(Duration.ZERO);
+      session.expose(session.spot(2, Duration.ofMinutes(20)));
+      session.pass(Duration.ofMinutes(19));
+      assertEquals(1, session.all(InstrumentEvent.Ended.class).size());
+      session.pass(Duration.ofMinutes(1));
+      assertEquals(2, session.receipt().grant());
+      assertEquals(15e-12 * 1210 / 1.602176634e-19, session.electrons(), 1);
+    }
+
+    @Test
     void forbidsWhatWaits() {
       exposeHalfALine();
       session.instrument.begin(session.fresh(session.map(2, 10)));
@@ -132,6 +146,7 @@ class EndingTest {
     @Test
     void endsAnExposureWhoseDaemonIsGone() {
       session.expose(leased(session.spot(1, Duration.ofMinutes(10)), Duration.ofSeconds(40)));
+      session.pass(Duration.ofSeconds(10));
       ((SimulatedInstrument) session.instrument).cutConnection();
       session.beat();
       session.pass(Duration.ofMinutes(20));
@@ -280,6 +295,7 @@ class EndingTest {
       session.hardware.openDoor();
       assertEquals(FaultKind.INTERLOCK, session.receipt().fault().orElseThrow().kind());
       assertEquals(Duration.ofSeconds(10), session.receipt().beamOn());
+      assertEquals(Optional.empty(), session.hardware.readings().conditions());
       session.instrument.prepare(5, Lab.VIOLET, Lab.MIDDLE);
       session.pass(Duration.ZERO);
       assertEquals(
@@ -300,6 +316,28 @@ class EndingTest {
     assertEquals(
         FaultKind.HIGH_VOLTAGE_TRIP,
         session.last(InstrumentEvent.NotPrepared.class).fault().kind());
+  }
+
+  @Test
+  void aTripWhilePreparingIsAnswered() {
+    session.instrument.prepare(5, Lab.COUNTING, Lab.MIDDLE);
+    session.pass(Duration.ofMinutes(5));
+    session.hardware.tripHighVoltage();
+    session.pass(Duration.ofMinutes(15));
+    assertEquals(
+        FaultKind.HIGH_VOLTAGE_TRIP,
+        session.last(InstrumentEvent.NotPrepared.class).fault().kind());
+    assertEquals(Optional.empty(), session.hardware.readings().conditions());
+  }
+
+  @Test
+  void noCurrentIsMeasuredThroughAClosedValve() {
+    session.prepare(Lab.COUNTING, Lab.MIDDLE);
+    session.instrument.windDown();
+    session.instrument.measure(6);
+    session.pass(Duration.ofMinutes(5));
+    assertEquals(
+        FaultKind.NOT_OFFERED, session.last(InstrumentEvent.NotMeasured.class).fault().kind());
   }
 
   @Test
