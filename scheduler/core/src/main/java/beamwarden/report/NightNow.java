@@ -14,6 +14,7 @@ import java.util.Optional;
  * @param instrument the instrument's name
  * @param state what it is doing
  * @param because why it stands by, is stopped or cannot be reached; may be empty
+ * @param stopped why the night is stopped, if it is
  * @param now the moment, on the run's line of time
  * @param zone the lab's time zone, for people
  * @param running the exposure that is being made, if one is
@@ -26,6 +27,7 @@ public record NightNow(
     String instrument,
     InstrumentState state,
     String because,
+    Optional<String> stopped,
     Instant now,
     ZoneId zone,
     Optional<RunningExposure> running,
@@ -39,6 +41,7 @@ public record NightNow(
         setup.profile().abilities().instrument(),
         state.instrument(),
         because(state),
+        state.halted().or(() -> state.books().stopped()),
         now,
         setup.profile().zone(),
         state.exposing().map(RunningExposure::of),

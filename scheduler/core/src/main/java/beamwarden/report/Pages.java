@@ -1,6 +1,7 @@
 package beamwarden.report;
 
 import beamwarden.beam.Conditions;
+import beamwarden.plan.JobCheck;
 import beamwarden.queue.JobState;
 import java.time.ZoneId;
 import java.util.List;
@@ -13,6 +14,18 @@ public final class Pages {
   /** A night report. */
   public static String night(NightReport report) {
     return NightPage.of(report);
+  }
+
+  /**
+   * What a check says of each job of a queue.
+   *
+   * @param queue the queue's name
+   * @param instrument the instrument's name
+   * @param checks what it says
+   * @param zone the lab's time zone
+   */
+  public static String check(String queue, String instrument, List<JobCheck> checks, ZoneId zone) {
+    return CheckPage.of(queue, instrument, checks, zone);
   }
 
   /** A sample's dose books. */

@@ -50,7 +50,7 @@ public final class Progress {
   /** Ready is not written in the books: it follows from the moment. */
   private JobState state(JobRecord record) {
     boolean waiting = record.state() == JobState.WAITING;
-    return waiting && shiftOpen && timely(record.job()) && unblocked(record.job())
+    return waiting && shiftOpen && timely(record.job()) && unblocked(record)
         ? JobState.READY
         : record.state();
   }
@@ -59,9 +59,10 @@ public final class Progress {
     return job.earliest().filter(now::isBefore).isEmpty();
   }
 
-  private boolean unblocked(Job job) {
-    return job.after().stream()
-        .allMatch(id -> books.job(id).filter(before -> before.state().satisfies()).isPresent());
+  private boolean unblocked(JobRecord record) {
+    return record.letGoOn()
+        || record.job().after().stream()
+            .allMatch(id -> books.job(id).filter(one -> one.state().satisfies()).isPresent());
   }
 
   /** A job whose points had their coincidences early is done all the same. */

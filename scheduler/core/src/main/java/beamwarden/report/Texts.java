@@ -2,7 +2,6 @@ package beamwarden.report;
 
 import beamwarden.quantity.Charge;
 import beamwarden.quantity.Fluence;
-import beamwarden.quantity.Length;
 import beamwarden.shift.Shift;
 import java.math.BigDecimal;
 import java.math.MathContext;
@@ -16,6 +15,8 @@ import java.util.Optional;
 /** How times and figures are said to people. */
 final class Texts {
   private static final DateTimeFormatter TIME = DateTimeFormatter.ofPattern("HH:mm", Locale.ROOT);
+  private static final DateTimeFormatter DAY =
+      DateTimeFormatter.ofPattern("MM-dd HH:mm", Locale.ROOT);
   private static final DateTimeFormatter MOMENT =
       DateTimeFormatter.ofPattern("yyyy-MM-dd HH:mm", Locale.ROOT);
   private static final double LARGEST_PLAIN = 1e7;
@@ -39,6 +40,11 @@ final class Texts {
   /** A moment by the lab's clock, with its date: {@code 2031-03-12 19:04}. */
   static String moment(Instant moment, ZoneId zone) {
     return MOMENT.format(moment.atZone(zone));
+  }
+
+  /** A moment by the lab's clock, with its day: {@code 03-12 19:04}. */
+  static String day(Instant moment, ZoneId zone) {
+    return DAY.format(moment.atZone(zone));
   }
 
   /** A shift by the lab's clock: {@code 19:00 to 07:00, unattended}. */
@@ -96,10 +102,5 @@ final class Texts {
       thousands++;
     }
     return String.format(Locale.ROOT, "%.3g %sB", scaled, " kMGT".charAt(thousands));
-  }
-
-  /** A place on a sample. */
-  static String place(double xMetres, double yMetres) {
-    return "[" + new Length(xMetres) + ", " + new Length(yMetres) + "]";
   }
 }

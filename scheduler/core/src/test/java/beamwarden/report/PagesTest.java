@@ -125,6 +125,7 @@ class PagesTest {
         "north-room",
         InstrumentState.EXPOSING,
         because,
+        Optional.empty(),
         lab.now(),
         Lab.ZONE,
         Optional.of(new RunningExposure("survey", 1, 0, 40, 100)),

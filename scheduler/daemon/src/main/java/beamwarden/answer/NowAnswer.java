@@ -11,6 +11,7 @@ import java.util.Optional;
  * @param instrument the instrument's name
  * @param state what it is doing: idle, preparing, exposing, standing-by, stopped, unreachable
  * @param because why it stands by, is stopped or cannot be reached; may be empty
+ * @param stopped why the night is stopped until a person lets it go on; null when it is not
  * @param now the moment, on the store's line of time
  * @param timeZone the lab's time zone
  * @param running the exposure that is being made, if one is
@@ -23,6 +24,7 @@ public record NowAnswer(
     @JsonProperty("instrument") String instrument,
     @JsonProperty("state") String state,
     @JsonProperty("because") String because,
+    @JsonProperty("stopped") Optional<String> stopped,
     @JsonProperty("now") Instant now,
     @JsonProperty("time_zone") String timeZone,
     @JsonProperty("running") Optional<RunningAnswer> running,
@@ -36,6 +38,7 @@ public record NowAnswer(
         now.instrument(),
         now.state().text(),
         now.because(),
+        now.stopped(),
         now.now(),
         now.zone().getId(),
         now.running().map(RunningAnswer::of),

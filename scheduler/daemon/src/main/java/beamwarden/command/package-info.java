@@ -1,9 +1,15 @@
 /**
- * The command line: one class per subcommand, exit codes in one place. The only package that writes
- * to standard output.
+ * The command line: one class per command, exit codes in one place. The only package that writes to
+ * standard output.
  *
- * <p>May import everything but {@code store}, {@code clockwork}, {@code web}, {@code web.api},
- * {@code web.stream}, {@code bridge}, {@code simulated} and {@code kit}: it asks a running daemon
- * over HTTP, and what runs in its own process is put together by the wiring.
+ * <p>{@code check} and {@code rehearse} answer by themselves, {@code serve} runs a daemon, all
+ * others speak REST to one. What needs the parts put together is asked of a {@link
+ * beamwarden.command.Workshop}, found at run time. The answer of a command goes to standard output,
+ * as a page or with {@code --json} as JSON; everything else goes to standard error.
+ *
+ * <p>May import {@code answer}, {@code document}, {@code config}, {@code report}, {@code run},
+ * {@code plan}, {@code estimate}, {@code ledger}, {@code dose}, {@code physics}, {@code profile},
+ * {@code queue}, {@code shift}, {@code instrument}, {@code beam}, {@code quantity} and {@code
+ * timing}.
  */
 package beamwarden.command;

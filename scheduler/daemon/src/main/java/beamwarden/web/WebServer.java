@@ -1,5 +1,6 @@
 package beamwarden.web;
 
+import beamwarden.answer.DaemonAnswer;
 import beamwarden.run.Desk;
 import beamwarden.web.api.Api;
 import beamwarden.web.api.Refusal;
@@ -56,7 +57,7 @@ public final class WebServer implements AutoCloseable {
   WebServer(Desk desk, WebSettings settings, Duration patience) {
     wishedPort = settings.port();
     pump = new Pump(desk);
-    ApiHandler api = new ApiHandler(new Api(desk, settings.profileHash(), patience));
+    ApiHandler api = new ApiHandler(new Api(desk, facts(settings), patience));
     StreamHandler stream = new StreamHandler(desk, pump);
     HttpHandler routes =
         exchange ->
@@ -77,6 +78,10 @@ public final class WebServer implements AutoCloseable {
             .setServerOption(UndertowOptions.IDLE_TIMEOUT, IDLE_MILLIS_MAX)
             .setHandler(this::whileOpen)
             .build();
+  }
+
+  private static DaemonAnswer facts(WebSettings settings) {
+    return new DaemonAnswer(settings.store().toAbsolutePath().toString(), settings.profileHash());
   }
 
   /** Requests that come while it closes are refused like any other. */

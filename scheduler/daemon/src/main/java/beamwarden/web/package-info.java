@@ -6,6 +6,7 @@
  * stay in this package. Reading is free on loopback; every change needs the token; the headers Host
  * and Origin must name this very server, so that no page of another site can ask anything.
  *
- * <p>May import {@code web.api}, {@code web.stream}, {@code run} and {@code ledger}.
+ * <p>May import {@code web.api}, {@code web.stream}, {@code answer}, {@code run} and {@code
+ * ledger}.
  */
 package beamwarden.web;

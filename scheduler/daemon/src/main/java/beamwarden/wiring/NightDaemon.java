@@ -110,7 +110,9 @@ public final class NightDaemon implements AutoCloseable {
     engine.enqueue(new Event.Woken());
     this.web =
         new WebServer(
-            engine, new WebSettings(start.port(), folder.readOrMakeToken(), start.profileHash()));
+            engine,
+            new WebSettings(
+                start.port(), folder.readOrMakeToken(), start.profileHash(), start.store()));
     this.address = web.start();
     folder.writeAddress(address.toString());
   }

@@ -23,12 +23,13 @@ import java.util.concurrent.CopyOnWriteArrayList;
 import java.util.function.Function;
 
 /** A run that does nothing by itself: its entries are put in, and its answers are given. */
-final class FakeDesk implements Desk {
-  static final Path EXAMPLES =
+public final class FakeDesk implements Desk {
+  /** The folder of the queue examples. */
+  public static final Path EXAMPLES =
       Path.of(System.getProperty("beamwarden.root", "../.."), "queue-examples");
 
   /** A Wednesday evening in the lab, ten minutes after the shift opened. */
-  static final Instant EVENING = Instant.parse("2031-03-12T18:10:00Z");
+  public static final Instant EVENING = Instant.parse("2031-03-12T18:10:00Z");
 
   private final List<Recorded> recorded = new CopyOnWriteArrayList<>();
   private final List<Event.Wish> asked = new CopyOnWriteArrayList<>();
@@ -38,7 +39,8 @@ final class FakeDesk implements Desk {
       wish -> CompletableFuture.completedFuture(Optional.empty());
   private volatile RunState state;
 
-  FakeDesk() {
+  /** A run on the instrument of the examples, with empty books. */
+  public FakeDesk() {
     Profile profile =
         ProfileDocuments.read(EXAMPLES.resolve("north-room.yaml")).value().orElseThrow();
     ShiftCalendar calendar =
@@ -48,7 +50,7 @@ final class FakeDesk implements Desk {
   }
 
   /** Records entries, as a step does, and tells of them. */
-  void record(Entry... entries) {
+  public void record(Entry... entries) {
     List<Recorded> more = new ArrayList<>();
     for (Entry entry : entries) {
       long number = recorded.size() + more.size() + 1L;
@@ -60,29 +62,30 @@ final class FakeDesk implements Desk {
   }
 
   /** Answers every wish so from now on. */
-  void answer(Optional<String> refusal) {
+  public void answer(Optional<String> refusal) {
     answer = wish -> CompletableFuture.completedFuture(refusal);
   }
 
   /** Never answers from now on. */
-  void keepSilent() {
+  public void keepSilent() {
     answer = wish -> new CompletableFuture<>();
   }
 
   /** Answers every wish with this from now on, whenever it is complete. */
-  void answer(CompletableFuture<Optional<String>> later) {
+  public void answer(CompletableFuture<Optional<String>> later) {
     answer = wish -> later;
   }
 
   /** Fails at every wish from now on. */
-  void breakDown() {
+  public void breakDown() {
     answer =
         wish -> {
           throw new IllegalStateException("out of order");
         };
   }
 
-  List<Event.Wish> asked() {
+  /** What it was asked for, in order. */
+  public List<Event.Wish> asked() {
     return List.copyOf(asked);
   }
 

@@ -87,7 +87,8 @@ class LoadAndShutdownTest {
     try (Served served = new Served()) {
       int port = served.address.getPort();
       try (WebServer second =
-          new WebServer(new FakeDesk(), new WebSettings(port, Served.TOKEN, "hash"))) {
+          new WebServer(
+              new FakeDesk(), new WebSettings(port, Served.TOKEN, "hash", Served.STORE))) {
         WebException refused = assertThrows(WebException.class, second::start);
         assertEquals(
             "port " + port + " on 127.0.0.1 cannot be had; choose another one with --port",
@@ -99,9 +100,12 @@ class LoadAndShutdownTest {
   @Test
   void keepsItsTokenToItself() {
     assertEquals(
-        "WebSettings[port=0, token=***, profileHash=hash]",
-        new WebSettings(0, "secret", "hash").toString());
-    assertThrows(IllegalArgumentException.class, () -> new WebSettings(0, " ", "hash"));
-    assertThrows(IllegalArgumentException.class, () -> new WebSettings(65_536, "secret", "hash"));
+        "WebSettings[port=0, token=***, profileHash=hash, store=store]",
+        new WebSettings(0, "secret", "hash", Served.STORE).toString());
+    assertThrows(
+        IllegalArgumentException.class, () -> new WebSettings(0, " ", "hash", Served.STORE));
+    assertThrows(
+        IllegalArgumentException.class,
+        () -> new WebSettings(65_536, "secret", "hash", Served.STORE));
   }
 }

@@ -288,6 +288,13 @@ class ResourcesTest {
   }
 
   @Test
+  void whereTheStoreLiesIsToldSoThatItsOwnerFindsTheToken() {
+    JsonNode daemon = json(served.get("/api/v1/daemon"));
+    assertEquals(Served.STORE.toAbsolutePath().toString(), daemon.get("store").asString());
+    assertEquals("profile-hash", daemon.get("profile_sha256").asString());
+  }
+
+  @Test
   void everyRefusalNamesAPageThatExplainsIt() {
     String type = json(served.get("/api/v1/nothing")).get("type").asString();
     HttpResponse<String> page = served.get(type);

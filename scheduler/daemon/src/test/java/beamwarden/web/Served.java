@@ -10,6 +10,7 @@ import java.net.http.HttpRequest;
 import java.net.http.HttpResponse;
 import java.net.http.HttpResponse.BodyHandlers;
 import java.nio.file.Files;
+import java.nio.file.Path;
 import java.time.Duration;
 import java.util.List;
 import java.util.stream.Stream;
@@ -17,13 +18,21 @@ import tools.jackson.databind.JsonNode;
 import tools.jackson.databind.json.JsonMapper;
 
 /** A web server in front of a fake run, spoken to over real loopback HTTP. */
-final class Served implements AutoCloseable {
-  static final String TOKEN = "the-token";
+public final class Served implements AutoCloseable {
+  /** The token that changes need. */
+  public static final String TOKEN = "the-token";
+
+  static final Path STORE = Path.of("store");
   private static final JsonMapper JSON = new JsonMapper();
 
-  final FakeDesk desk = new FakeDesk();
+  /** The run behind it. */
+  public final FakeDesk desk;
+
   final WebServer server;
-  final URI address;
+
+  /** Its address. */
+  public final URI address;
+
   final HttpClient client =
       HttpClient.newBuilder()
           .version(HttpClient.Version.HTTP_1_1)
@@ -35,12 +44,29 @@ final class Served implements AutoCloseable {
   }
 
   Served(Duration patience) {
-    server = new WebServer(desk, new WebSettings(0, TOKEN, "profile-hash"), patience);
+    this(new FakeDesk(), STORE, patience);
+  }
+
+  private Served(FakeDesk desk, Path store, Duration patience) {
+    this.desk = desk;
+    server = new WebServer(desk, new WebSettings(0, TOKEN, "profile-hash", store), patience);
     address = server.start();
   }
 
+  /** A server whose address and token lie in a store's folder, as those of a daemon do. */
+  public static Served in(Path store, FakeDesk desk) {
+    Served served = new Served(desk, store, Duration.ofSeconds(10));
+    try {
+      Files.writeString(store.resolve("token"), TOKEN + "\n");
+      Files.writeString(store.resolve("address"), served.address + "\n");
+    } catch (IOException failure) {
+      throw new IllegalStateException(failure);
+    }
+    return served;
+  }
+
   /** The overnight queue of the examples. */
-  static Queue overnight(FakeDesk desk) {
+  public static Queue overnight(FakeDesk desk) {
     return QueueDocuments.read(
             FakeDesk.EXAMPLES.resolve("02-overnight.yaml"), desk.setup().profile())
         .value()
@@ -48,7 +74,7 @@ final class Served implements AutoCloseable {
   }
 
   /** Puts the overnight queue into the books, as if it had been handed in. */
-  Queue submitOvernight() {
+  public Queue submitOvernight() {
     Queue queue = overnight(desk);
     Stream<Entry> samples =
         queue.samples().stream().map(sample -> new Entry.SampleDeclared(sample, ""));

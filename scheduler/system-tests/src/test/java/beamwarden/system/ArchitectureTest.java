@@ -62,13 +62,14 @@ class ArchitectureTest {
           scheduler/daemon   | web.api    | answer document report run plan ledger profile queue \
                                             shift instrument                            | jackson
           scheduler/daemon   | web.stream | web.api answer run ledger                   | slf4j
-          scheduler/daemon   | web        | web.api web.stream run ledger               | undertow slf4j
-          scheduler/daemon   | wiring     | web web.api web.stream answer document config clockwork store \
-                                            report run plan estimate ledger dose physics profile \
-                                            queue shift bridge instrument beam quantity timing      | jackson slf4j
-          scheduler/daemon   | command    | wiring answer document config \
+          scheduler/daemon   | web        | web.api web.stream answer run ledger        | undertow slf4j
+          scheduler/daemon   | command    | answer document config \
                                             report run plan estimate ledger dose physics profile \
                                             queue shift instrument beam quantity timing | picocli slf4j
+          scheduler/daemon   | wiring     | command web web.api web.stream answer document config \
+                                            clockwork store report run plan estimate ledger dose \
+                                            physics profile queue shift bridge \
+                                            instrument beam quantity timing             | jackson slf4j
           """);
 
   private static final ArchitectureRules RULES = new ArchitectureRules("beamwarden");

@@ -1,5 +1,6 @@
 package beamwarden.web.api;
 
+import beamwarden.answer.DaemonAnswer;
 import beamwarden.run.Desk;
 import java.time.Duration;
 import java.util.List;
@@ -20,16 +21,16 @@ public final class Api {
    * The interface of a run.
    *
    * @param desk where the run is asked
-   * @param profileHash the hash of the profile's document, noted with every queue
+   * @param facts what does not change while the daemon runs
    * @param patience how long a change may take until it is on disk
    */
-  public Api(Desk desk, String profileHash, Duration patience) {
+  public Api(Desk desk, DaemonAnswer facts, Duration patience) {
     Wishes wishes = new Wishes(desk, patience);
     Views views = new Views(desk);
     routes =
         Stream.of(
-                new FrontResource().routes(),
-                new QueueResource(desk, wishes, profileHash).routes(),
+                new FrontResource(facts).routes(),
+                new QueueResource(desk, wishes, facts.profileHash()).routes(),
                 new JobResource(desk, wishes, views).routes(),
                 new NightResource(desk, wishes, views).routes(),
                 new SampleResource(desk, views).routes())

@@ -1,5 +1,6 @@
 package beamwarden.web.api;
 
+import beamwarden.answer.DaemonAnswer;
 import java.util.List;
 
 /** The way in for a person who found the address, and the pages that explain refusals. */
@@ -13,6 +14,7 @@ final class FrontResource {
       the store's folder, as the header  Authorization: Bearer TOKEN.
       Reports come as JSON, or as a page with the header  Accept: text/plain.
 
+      GET   /api/v1/daemon                 where the store lies
       GET   /api/v1/night                  what goes on just now
       GET   /api/v1/jobs                   where the jobs stand
       GET   /api/v1/jobs/ID                one job, with its dose
@@ -30,9 +32,16 @@ final class FrontResource {
       rules come first.
       """;
 
+  private final DaemonAnswer facts;
+
+  FrontResource(DaemonAnswer facts) {
+    this.facts = facts;
+  }
+
   List<Route> routes() {
     return List.of(
         new Route("GET", "/", (request, name) -> Reply.text(PAGE)),
+        new Route("GET", "/api/v1/daemon", (request, name) -> Reply.json(facts)),
         new Route("GET", "/api/v1/refusals/*", (request, name) -> explain(name)));
   }
 

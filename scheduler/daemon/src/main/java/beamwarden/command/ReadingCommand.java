@@ -1,0 +1,39 @@
+package beamwarden.command;
+
+import java.nio.file.Path;
+import java.util.Optional;
+
+/** A command that reads from a daemon, or from a store in which none is at work. */
+abstract class ReadingCommand extends RemoteCommand {
+  ReadingCommand(Surroundings surroundings) {
+    super(surroundings);
+  }
+
+  /** Answers from a store's own entries. */
+  abstract void fromStore(Workshop.Shelf shelf);
+
+  /** The path at which a daemon answers the same. */
+  abstract String path();
+
+  @Override
+  final ExitCode run() {
+    Optional<Path> idle =
+        daemon().byAddress()
+            ? Optional.empty()
+            : daemon()
+                .store(surroundings())
+                .filter(folder -> DaemonOptions.served(folder).isEmpty());
+    if (idle.isPresent()) {
+      fromStore(surroundings().workshop().get().shelf(idle.get()));
+      return ExitCode.FINE;
+    }
+    return run(client());
+  }
+
+  @Override
+  final ExitCode run(Client client) {
+    String answer = client.get(path(), json() ? Client.JSON : Client.TEXT);
+    surroundings().answer(json() ? indented(answer) : answer);
+    return ExitCode.FINE;
+  }
+}
