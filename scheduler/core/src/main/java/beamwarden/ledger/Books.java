@@ -1,5 +1,6 @@
 package beamwarden.ledger;
 
+import beamwarden.beam.BeamSettings;
 import beamwarden.dose.Delivery;
 import beamwarden.dose.SampleDose;
 import beamwarden.instrument.Receipt;
@@ -101,7 +102,7 @@ public final class Books {
     return unresolved;
   }
 
-  /** Grants booked since the last current reading, by number: a reading may raise them. */
+  /** Grants booked since the last reading under their settings, by number: one may raise them. */
   public Map<Long, GrantRecord> sinceReading() {
     return sinceReading;
   }
@@ -223,8 +224,11 @@ public final class Books {
     }
 
     private void foldNight(Entry entry) {
-      if (entry instanceof Entry.CurrentMeasured) {
-        sinceReading.clear();
+      if (entry instanceof Entry.CurrentMeasured measured) {
+        BeamSettings settings = measured.reading().settings();
+        sinceReading
+            .values()
+            .removeIf(record -> record.opened().exposure().conditions().beam().equals(settings));
       } else if (entry instanceof Entry.SessionSeen seen) {
         see(seen);
       } else if (entry instanceof Entry.Approved approved) {
@@ -270,7 +274,7 @@ public final class Books {
       Receipt receipt = booked.receipt();
       GrantRecord before = unresolved.remove(receipt.grant());
       if (before != null) {
-        beamOnThisShift = beamOnThisShift.plus(booked.delivered().upperBeamOn());
+        countBeam(before, booked.delivered());
         jobs.computeIfPresent(
             booked.delivered().exposure().job(),
             (id, record) -> record.received(booked.delivered().exposure().pass(), receipt));
@@ -285,6 +289,9 @@ public final class Books {
     private void presume(Entry.GrantPresumed presumed) {
       long grant = presumed.atMost().grant();
       GrantRecord before = unresolved.remove(grant);
+      if (before != null) {
+        countBeam(before, presumed.atMost());
+      }
       if (before != null && presumed.receipt().isEmpty()) {
         unresolved.put(
             grant,
@@ -292,6 +299,13 @@ public final class Books {
                 before.opened(), GrantState.PRESUMED, presumed.atMost(), Optional.empty()));
       }
       replace(presumed.chain(), grant, presumed.atMost());
+    }
+
+    /** What was presumed is counted already. */
+    private void countBeam(GrantRecord before, Delivery delivery) {
+      if (before.state() == GrantState.OPEN) {
+        beamOnThisShift = beamOnThisShift.plus(delivery.upperBeamOn());
+      }
     }
 
     private void replace(String sample, long grant, Delivery delivery) {
