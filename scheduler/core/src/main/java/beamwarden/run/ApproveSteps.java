@@ -8,6 +8,7 @@ import beamwarden.ledger.SampleRecord;
 import beamwarden.queue.HeldFor;
 import beamwarden.queue.JobState;
 import beamwarden.queue.Sample;
+import java.util.List;
 import java.util.Optional;
 
 /** What a person loosens or confirms; each needs a reason, and is an entry. */
@@ -52,7 +53,9 @@ final class ApproveSteps {
       return Optional.of("no placement waits to be confirmed");
     }
     turn.write(new Entry.Approved(approve.thing(), approve.reason()));
-    goOn(turn, HeldFor.PLACEMENTS, record -> true);
+    for (JobRecord record : held(turn, HeldFor.PLACEMENTS)) {
+      JobSteps.change(turn, record, JobState.WAITING, "approved");
+    }
     return Optional.empty();
   }
 
@@ -64,7 +67,11 @@ final class ApproveSteps {
     }
     turn.write(new Entry.Approved(approve.thing(), approve.reason()));
     turn.write(new Entry.SampleDeclared(asked.get(), approve.reason()));
-    goOn(turn, HeldFor.APPROVAL, job -> job.job().sample().equals(approve.thing()));
+    for (JobRecord job : held(turn, HeldFor.APPROVAL)) {
+      if (job.job().sample().equals(approve.thing())) {
+        JobSteps.goOn(turn, job, "approved");
+      }
+    }
     return Optional.empty();
   }
 
@@ -100,20 +107,13 @@ final class ApproveSteps {
     }
     turn.write(new Entry.Approved(approve.thing(), approve.reason()));
     turn.write(new Entry.SampleDeclared(raised, approve.reason()));
-    JobSteps.change(turn, record, JobState.WAITING, "approved: " + approve.reason());
+    JobSteps.goOn(turn, record, "approved: " + approve.reason());
     return Optional.empty();
   }
 
-  /** Which of the held jobs go on. */
-  private interface Which {
-    boolean matches(JobRecord record);
-  }
-
-  private static void goOn(Turn turn, HeldFor held, Which which) {
-    for (JobRecord record : turn.books.jobs(JobState.HELD)) {
-      if (record.heldFor().equals(Optional.of(held)) && which.matches(record)) {
-        JobSteps.change(turn, record, JobState.WAITING, "approved");
-      }
-    }
+  private static List<JobRecord> held(Turn turn, HeldFor what) {
+    return turn.books.jobs(JobState.HELD).stream()
+        .filter(record -> record.heldFor().equals(Optional.of(what)))
+        .toList();
   }
 }

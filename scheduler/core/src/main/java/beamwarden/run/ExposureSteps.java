@@ -14,9 +14,12 @@ import beamwarden.instrument.StopWhen;
 import beamwarden.ledger.Entry;
 import beamwarden.ledger.Entry.Noted.What;
 import beamwarden.queue.JobState;
+import beamwarden.shift.Shift;
 import java.time.Duration;
 import java.time.Instant;
+import java.util.Comparator;
 import java.util.Optional;
+import java.util.stream.Stream;
 
 /**
  * The way of a grant: storing → stored → sent → exposing → receipt booked → acknowledged.
@@ -32,7 +35,7 @@ final class ExposureSteps {
   }
 
   /** Looks after the grant on its way; true when there is none and other work may be chosen. */
-  boolean decide(Turn turn, Instant usableEnd) {
+  boolean decide(Turn turn, Optional<Shift> shift) {
     turn.toAcknowledge.forEach(grant -> turn.send(new Command.Acknowledge(grant)));
     turn.toAcknowledge.clear();
     if (turn.current.isEmpty()) {
@@ -41,37 +44,39 @@ final class ExposureSteps {
     Slot slot = turn.current.get();
     turn.standingBy = "";
     if (slot.phase() == Slot.Phase.STORED) {
-      send(turn, slot, usableEnd);
+      send(turn, slot, shift);
     } else if (!turn.now.isBefore(slot.due())) {
       new LinkSteps(setup).sealAgain(turn, "the receipt of grant " + slot.grant() + " is overdue");
     } else {
-      stopWhereNeeded(turn, slot, usableEnd);
+      stopWhereNeeded(turn, slot, shift);
     }
     return false;
   }
 
-  private void stopWhereNeeded(Turn turn, Slot slot, Instant usableEnd) {
+  private void stopWhereNeeded(Turn turn, Slot slot, Optional<Shift> shift) {
+    boolean open = shift.filter(now -> turn.now.isBefore(now.usableEnd())).isPresent();
     boolean atOnce = !turn.stopWish.equals(Optional.of(StopWhen.AT_BOUNDARY));
     boolean stopped = turn.books.stopped().isPresent();
-    boolean now = (stopped && atOnce) || !turn.now.isBefore(usableEnd);
+    boolean now = (stopped && atOnce) || !open;
     boolean jobMayGoOn =
         turn.books
             .job(slot.opened().exposure().job())
             .filter(job -> job.state() == JobState.RUNNING)
             .isPresent();
-    if (slot.stopping() || (!now && !stopped && jobMayGoOn)) {
+    StopWhen when = now ? StopWhen.NOW : StopWhen.AT_BOUNDARY;
+    if (slot.stopping(when) || (!now && !stopped && jobMayGoOn)) {
       return;
     }
-    turn.current = Optional.of(slot.asStopping());
-    turn.send(new Command.StopExposure(now ? StopWhen.NOW : StopWhen.AT_BOUNDARY));
+    turn.current = Optional.of(slot.asStopping(when));
+    turn.send(new Command.StopExposure(when));
     voidNext(turn, "the exposure before it was stopped");
   }
 
-  /** Sends a stored grant, or voids it when it could no longer end in time. */
-  private void send(Turn turn, Slot slot, Instant usableEnd) {
+  /** Sends a stored grant, or voids it when it could no longer start and end in time. */
+  private void send(Turn turn, Slot slot, Optional<Shift> shift) {
     Exposure exposure = slot.opened().exposure();
     Duration takes = Timings.exposure(exposure, setup.profile().abilities());
-    Instant latest = usableEnd.minus(takes);
+    Instant latest = latestStart(turn, exposure, shift);
     if (turn.now.isAfter(latest) || !mayExpose(turn, exposure.job())) {
       turn.current = Optional.empty();
       turn.write(neverSent(slot, "it could no longer be exposed in time"));
@@ -82,6 +87,20 @@ final class ExposureSteps {
     Instant due = limit.plus(takes).plus(setup.waits().answerWithin());
     turn.current = Optional.of(slot.sentAt(turn.now, due));
     turn.send(new Command.Begin(grant(turn, slot, limit)));
+  }
+
+  /** So that it ends before the wind-down and its job's deadline; never outside a shift. */
+  private Instant latestStart(Turn turn, Exposure exposure, Optional<Shift> shift) {
+    Duration takes = Timings.exposure(exposure, setup.profile().abilities());
+    Optional<Instant> deadline =
+        turn.books.job(exposure.job()).flatMap(record -> record.job().deadline());
+    return Stream.of(
+            shift.map(open -> open.usableEnd().minus(takes)).or(() -> Optional.of(Instant.MIN)),
+            shift.flatMap(Shift::latestStart),
+            deadline.map(moment -> moment.minus(takes)))
+        .flatMap(Optional::stream)
+        .min(Comparator.naturalOrder())
+        .orElseThrow();
   }
 
   private boolean mayExpose(Turn turn, String job) {
@@ -133,16 +152,30 @@ final class ExposureSteps {
     if (slot.isEmpty()) {
       return;
     }
-    Fault fault = refused.fault();
     turn.current = Optional.empty();
-    turn.write(
-        new Entry.GrantVoided(
-            refused.grant(), slot.get().opened().chain(), !slot.get().stopping(), fault.message()));
     voidNext(turn, "the grant before it was refused");
     turn.view = turn.view.unprepared();
-    if (!slot.get().stopping()) {
-      Booking.fault(turn, setup.profile(), slot.get().opened().exposure().job(), fault);
+    if (slot.get().phase() == Slot.Phase.EXPOSING) {
+      presumeBegun(turn, slot.get());
+    } else {
+      voidRefused(turn, slot.get(), refused.fault());
     }
+  }
+
+  private void voidRefused(Turn turn, Slot slot, Fault fault) {
+    Entry.GrantOpened opened = slot.opened();
+    turn.write(
+        new Entry.GrantVoided(slot.grant(), opened.chain(), !slot.stopping(), fault.message()));
+    if (!slot.stopping()) {
+      Booking.fault(turn, setup.profile(), opened.exposure().job(), fault);
+    }
+  }
+
+  /** What was said to have begun is not void because it is said not to have. */
+  private static void presumeBegun(Turn turn, Slot slot) {
+    String why = "grant " + slot.grant() + " was said to have begun, and then not to have";
+    turn.write(new Entry.GrantPresumed(slot.opened().inFull(), why, Optional.empty()));
+    turn.note(What.STOPPED, why + "; the night is stopped, check the instrument");
   }
 
   void ended(Turn turn, Receipt receipt) {
@@ -179,12 +212,7 @@ final class ExposureSteps {
     if (slot.isEmpty() || slot.get().phase() != Slot.Phase.STORED) {
       return;
     }
-    setup
-        .calendar()
-        .current(turn.now)
-        .ifPresentOrElse(
-            shift -> send(turn, slot.get(), shift.usableEnd()),
-            () -> send(turn, slot.get(), turn.now));
+    send(turn, slot.get(), setup.calendar().current(turn.now));
   }
 
   /**
@@ -192,13 +220,15 @@ final class ExposureSteps {
    */
   private Receiving judge(Turn turn, Slot slot, Receipt receipt) {
     Delivery inFull = slot.opened().inFull();
+    Receiving outcome = Deliveries.received(inFull, receipt, setup.profile().abilities().meter());
     Duration passed = Duration.between(slot.sent(), turn.now);
     Duration slack = inFull.tolerances().blanking().plus(CLOCK_SLACK);
-    if (receipt.beamOn().compareTo(passed.plus(slack)) > 0) {
-      return new Receiving.Contradicts(
-          "its receipt tells of " + receipt.beamOn() + " of beam after " + passed, inFull);
+    if (receipt.beamOn().compareTo(passed.plus(slack)) <= 0) {
+      return outcome;
     }
-    return Deliveries.received(inFull, receipt, setup.profile().abilities().meter());
+    return new Receiving.Contradicts(
+        "its receipt tells of " + receipt.beamOn() + " of beam after " + passed,
+        outcome instanceof Receiving.Contradicts higher ? higher.atMost() : inFull);
   }
 
   /** How far two processes' clocks may come apart within one exposure. */
@@ -206,10 +236,18 @@ final class ExposureSteps {
 
   void trouble(Turn turn, Fault fault) {
     turn.note(What.FAULT, fault.message());
-    if (fault.kind().remedy() == FaultKind.Remedy.STOP_NIGHT && turn.books.stopped().isEmpty()) {
-      turn.note(What.STOPPED, fault.message());
+    if (fault.kind().remedy() == FaultKind.Remedy.STOP_NIGHT) {
+      stopNight(turn, fault);
     }
     turn.view = turn.view.unprepared();
+  }
+
+  /** A fault does not wait for the boundary at which a person wanted to stop. */
+  private static void stopNight(Turn turn, Fault fault) {
+    turn.stopWish = Optional.empty();
+    if (turn.books.stopped().isEmpty()) {
+      turn.note(What.STOPPED, fault.message());
+    }
   }
 
   private static Optional<Slot> currentOf(Turn turn, long grant) {

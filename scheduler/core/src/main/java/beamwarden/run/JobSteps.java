@@ -59,6 +59,15 @@ final class JobSteps {
     turn.write(Settling.held(record, what, because));
   }
 
+  /** Lets a held job go on; while a chamber session waits to be confirmed, it waits for that. */
+  static void goOn(Turn turn, JobRecord record, String because) {
+    if (turn.books.unconfirmedSession().isPresent()) {
+      turn.write(LinkSteps.holdForPlacements(record.job().id()));
+    } else {
+      change(turn, record, JobState.WAITING, because);
+    }
+  }
+
   static void change(Turn turn, JobRecord record, JobState state, String because) {
     turn.write(Settling.changed(record, state, because));
   }

@@ -114,13 +114,13 @@ final class LinkSteps {
     }
   }
 
+  /** Why jobs wait while nobody has confirmed a chamber session. */
+  static final String TOUCHED =
+      "the chamber was opened, vented or re-homed; confirm holder and placements with approve"
+          + " placements";
+
   static Entry holdForPlacements(String job) {
-    return new Entry.JobChanged(
-        job,
-        JobState.HELD,
-        Optional.of(HeldFor.PLACEMENTS),
-        "the chamber was opened, vented or re-homed; confirm holder and placements with approve"
-            + " placements");
+    return new Entry.JobChanged(job, JobState.HELD, Optional.of(HeldFor.PLACEMENTS), TOUCHED);
   }
 
   void fenceRaised(Turn turn, Event.FenceRaised raised) {

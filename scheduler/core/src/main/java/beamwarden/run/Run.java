@@ -166,8 +166,7 @@ public final class Run {
       link.sealAgain(turn, "the instrument did not answer " + describe(turn.doing));
       return;
     }
-    Instant usableEnd = shift.map(Shift::usableEnd).orElse(Instant.MIN);
-    if (!exposures.decide(turn, usableEnd)) {
+    if (!exposures.decide(turn, shift)) {
       if (turn.current.isPresent() && !turn.storing()) {
         shift.ifPresent(open -> work.lookAhead(turn, open));
       }

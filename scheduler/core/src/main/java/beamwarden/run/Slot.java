@@ -1,7 +1,9 @@
 package beamwarden.run;
 
+import beamwarden.instrument.StopWhen;
 import beamwarden.ledger.Entry.GrantOpened;
 import java.time.Instant;
+import java.util.Optional;
 
 /**
  * A grant on its way.
@@ -12,7 +14,7 @@ import java.time.Instant;
  * @param sent when it was sent; the far future before
  * @param due when its receipt is overdue; the far future before it is sent
  * @param unitsDone units done so far, as the instrument last said
- * @param stopping whether its exposure was asked to end early
+ * @param stopAsked how soon its exposure was asked to end early, if it was
  * @param lookedAhead whether it was seen to that the next grant is stored while it runs
  */
 record Slot(
@@ -22,7 +24,7 @@ record Slot(
     Instant sent,
     Instant due,
     long unitsDone,
-    boolean stopping,
+    Optional<StopWhen> stopAsked,
     boolean lookedAhead) {
   /** How far a grant is. */
   enum Phase {
@@ -37,27 +39,37 @@ record Slot(
   }
 
   static Slot storing(GrantOpened opened) {
-    return new Slot(opened, Phase.STORING, "", Instant.MAX, Instant.MAX, 0, false, false);
+    return new Slot(
+        opened, Phase.STORING, "", Instant.MAX, Instant.MAX, 0, Optional.empty(), false);
   }
 
   Slot stored(String head) {
-    return new Slot(opened, Phase.STORED, head, sent, due, 0, stopping, lookedAhead);
+    return new Slot(opened, Phase.STORED, head, sent, due, 0, stopAsked, lookedAhead);
   }
 
   Slot sentAt(Instant now, Instant overdue) {
-    return new Slot(opened, Phase.SENT, chainHead, now, overdue, 0, stopping, lookedAhead);
+    return new Slot(opened, Phase.SENT, chainHead, now, overdue, 0, stopAsked, lookedAhead);
   }
 
   Slot exposing(long units) {
-    return new Slot(opened, Phase.EXPOSING, chainHead, sent, due, units, stopping, lookedAhead);
+    return new Slot(opened, Phase.EXPOSING, chainHead, sent, due, units, stopAsked, lookedAhead);
   }
 
-  Slot asStopping() {
-    return new Slot(opened, phase, chainHead, sent, due, unitsDone, true, lookedAhead);
+  Slot asStopping(StopWhen when) {
+    return new Slot(opened, phase, chainHead, sent, due, unitsDone, Optional.of(when), lookedAhead);
   }
 
   Slot asLookedAhead() {
-    return new Slot(opened, phase, chainHead, sent, due, unitsDone, stopping, true);
+    return new Slot(opened, phase, chainHead, sent, due, unitsDone, stopAsked, true);
+  }
+
+  boolean stopping() {
+    return stopAsked.isPresent();
+  }
+
+  /** Whether it was asked to end that soon already, or sooner. */
+  boolean stopping(StopWhen when) {
+    return stopAsked.filter(asked -> asked == StopWhen.NOW || asked == when).isPresent();
   }
 
   long grant() {

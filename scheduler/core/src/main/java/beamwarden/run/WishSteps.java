@@ -110,27 +110,27 @@ final class WishSteps {
   }
 
   private Optional<String> release(Turn turn, Event.Wish.Release release) {
-    Optional<String> refusal =
-        forEach(
-            turn,
-            release.jobs(),
-            record -> {
-              Optional<HeldFor> held = record.heldFor();
-              boolean byHand =
-                  held.equals(Optional.of(HeldFor.A_PERSON))
-                      || held.equals(Optional.of(HeldFor.PREDECESSOR));
-              if (byHand) {
-                JobSteps.change(turn, record, JobState.WAITING, "released");
-              }
-              return held.isPresent() && !byHand
-                  ? Optional.of(record.job().id() + " needs approve: " + record.because())
-                  : Optional.empty();
-            });
+    Optional<String> refusal = forEach(turn, release.jobs(), record -> release(turn, record));
     if (release.night() && turn.books.stopped().isPresent()) {
       turn.stopWish = Optional.empty();
       turn.note(What.GOES_ON, "a person let the night go on");
     }
     return refusal;
+  }
+
+  private static Optional<String> release(Turn turn, JobRecord record) {
+    Optional<HeldFor> held = record.heldFor();
+    boolean byHand =
+        held.equals(Optional.of(HeldFor.A_PERSON)) || held.equals(Optional.of(HeldFor.PREDECESSOR));
+    if (!byHand) {
+      return held.map(what -> needsApproval(record, record.because()));
+    }
+    JobSteps.goOn(turn, record, "released");
+    return turn.books.unconfirmedSession().map(session -> needsApproval(record, LinkSteps.TOUCHED));
+  }
+
+  private static String needsApproval(JobRecord record, String because) {
+    return record.job().id() + " needs approve: " + because;
   }
 
   private Optional<String> withdraw(Turn turn, List<String> ids) {
