@@ -46,6 +46,28 @@ final class Client {
     this.store = store;
   }
 
+  /** Whether a daemon answers, and serves the store in this folder. */
+  boolean serves(Path folder) {
+    try {
+      HttpResponse<String> response =
+          exchange(request("/api/v1/daemon").GET().build(), BodyHandlers.ofString());
+      return Json.read(response.body(), DaemonAnswer.class)
+          .map(DaemonAnswer::store)
+          .filter(store -> same(Path.of(store), folder))
+          .isPresent();
+    } catch (IOException gone) {
+      return false;
+    }
+  }
+
+  private static boolean same(Path one, Path other) {
+    try {
+      return Files.isSameFile(one, other);
+    } catch (IOException missing) {
+      return false;
+    }
+  }
+
   /** Reads something, as JSON or as a page. */
   String get(String path, String type) {
     return answered(send(request(path).header("Accept", type).GET()));

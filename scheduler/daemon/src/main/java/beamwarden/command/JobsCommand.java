@@ -48,6 +48,11 @@ abstract class JobsCommand extends RemoteCommand {
     Release(Surroundings surroundings) {
       super(surroundings, "release");
     }
+
+    @Override
+    String besides() {
+      return "The night goes on if it was stopped.\n";
+    }
   }
 
   /** Takes jobs back. */
@@ -69,14 +74,19 @@ abstract class JobsCommand extends RemoteCommand {
     return ExitCode.FINE;
   }
 
-  private static String page(JobsAnswer answer) {
-    if (answer.jobs().isEmpty()) {
-      return "There was no such job.\n";
-    }
+  private String page(JobsAnswer answer) {
     StringBuilder page = new StringBuilder();
     for (ProgressAnswer job : answer.jobs()) {
       page.append(job.id()).append(" is ").append(job.state()).append('\n');
     }
-    return page.toString();
+    if (answer.jobs().isEmpty()) {
+      page.append("There is no job to ").append(verb).append(".\n");
+    }
+    return page.append(all ? besides() : "").toString();
+  }
+
+  /** What happens with all of them besides. */
+  String besides() {
+    return "";
   }
 }

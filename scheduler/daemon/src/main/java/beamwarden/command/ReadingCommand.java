@@ -17,17 +17,20 @@ abstract class ReadingCommand extends RemoteCommand {
 
   @Override
   final ExitCode run() {
-    Optional<Path> idle =
-        daemon().byAddress()
-            ? Optional.empty()
-            : daemon()
-                .store(surroundings())
-                .filter(folder -> DaemonOptions.served(folder).isEmpty());
-    if (idle.isPresent()) {
-      fromStore(surroundings().workshop().get().shelf(idle.get()));
+    Optional<Path> folder =
+        daemon().byAddress() ? Optional.empty() : daemon().store(surroundings());
+    if (folder.isPresent() && !served(folder.get())) {
+      fromStore(surroundings().workshop().get().shelf(folder.get()));
       return ExitCode.FINE;
     }
     return run(client());
+  }
+
+  /** A daemon that was killed leaves its address behind, and another one may have taken it. */
+  private boolean served(Path folder) {
+    return DaemonOptions.served(folder)
+        .filter(address -> new Client(address, Optional.of(folder)).serves(folder))
+        .isPresent();
   }
 
   @Override

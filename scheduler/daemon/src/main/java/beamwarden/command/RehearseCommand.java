@@ -99,7 +99,7 @@ final class RehearseCommand implements Callable<Integer> {
     }
     NightReport report = report(known, start, rehearsed);
     surroundings.answer(common.json() ? Json.lines(NightAnswer.of(report)) : Pages.night(report));
-    return done(rehearsed) ? ExitCode.FINE : ExitCode.NO;
+    return done(wanted, rehearsed) ? ExitCode.FINE : ExitCode.NO;
   }
 
   private static NightReport report(Profile known, Instant start, Workshop.Rehearsed rehearsed) {
@@ -115,8 +115,9 @@ final class RehearseCommand implements Callable<Integer> {
         .of(night, rehearsed.entries(), Optional.empty(), rehearsed.ended());
   }
 
-  private static boolean done(Workshop.Rehearsed rehearsed) {
-    return Books.of(rehearsed.entries()).jobs().stream()
-        .allMatch(record -> record.state().satisfies());
+  private static boolean done(Queue wanted, Workshop.Rehearsed rehearsed) {
+    Books books = Books.of(rehearsed.entries());
+    return wanted.jobs().stream()
+        .allMatch(job -> books.job(job.id()).orElseThrow().state().satisfies());
   }
 }

@@ -158,7 +158,10 @@ class RemoteCommandsTest {
     @Test
     void areMadeOfAllJobs() {
       served.submitOvernight();
-      assertEquals(0, caller.call("release", "--all").code());
+      Called released = caller.call("release", "--all");
+      assertEquals(0, released.code());
+      assertEquals(
+          "There is no job to release.\nThe night goes on if it was stopped.\n", released.out());
       assertEquals(new Event.Wish.Release(List.of(), true), onlyWish());
       assertEquals(0, caller.call("withdraw", "--all").code());
       assertEquals(8, ((Event.Wish.Withdraw) served.desk.asked().get(1)).jobs().size());
@@ -212,6 +215,24 @@ class RemoteCommandsTest {
       Called json = caller.call("report", "2031-03-12", "--at", served.address, "--json");
       assertEquals("2031-03-12", json.json().get("night").asString());
       assertEquals(1, caller.call("report", "2031-03-08").code());
+    }
+
+    @Test
+    void comeFromTheStoreOfADaemonThatWasKilledAndLeftItsAddress() {
+      served.submitOvernight();
+      caller.workshop.entries = served.desk.entriesAfter(0, 100);
+      served.close();
+      assertTrue(caller.call("dose", "dia-5").out().startsWith("Dose of dia-5"));
+      assertEquals(List.of(store), caller.workshop.stores);
+    }
+
+    @Test
+    void comeFromTheStoreWhenAnotherDaemonTookTheAddress(@TempDir Path another) throws IOException {
+      Files.copy(store.resolve("address"), another.resolve("address"));
+      served.submitOvernight();
+      caller.workshop.entries = served.desk.entriesAfter(0, 100);
+      assertTrue(caller.call("dose", "dia-5", "--store", another).out().startsWith("Dose of"));
+      assertEquals(List.of(another), caller.workshop.stores);
     }
 
     @Test
