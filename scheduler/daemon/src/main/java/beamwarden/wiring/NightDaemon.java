@@ -38,9 +38,9 @@ import org.slf4j.LoggerFactory;
 /**
  * One instrument's daemon, put together: store, line of time, instrument, engine, clock.
  *
- * <p>Starts in this order: lock the store, read and verify the books, open the line of time, start
- * or find the instrument's process, take the fence, let the engine make its first step. Stops in
- * the reverse order; the instrument is blanked and let go first, so that nothing new begins.
+ * <p>Starts in this order: lock the store, read and verify the books, open the line of time, take
+ * the fence, open the port; the engine's first step then starts or finds the instrument's process.
+ * Stops in the reverse order; the instrument is blanked and let go, so that nothing new begins.
  */
 public final class NightDaemon implements AutoCloseable {
   private static final Logger LOGGER = LoggerFactory.getLogger(NightDaemon.class);
@@ -107,14 +107,27 @@ public final class NightDaemon implements AutoCloseable {
         new QuartzClock(
             line, anchor, new WallClock(InstantSource.system(), line::wallStep), new Waking());
     armed.set(clock);
+    this.web = new WebServer(engine, settings(start, folder));
+    this.address = openPort();
     engine.enqueue(new Event.Woken());
-    this.web =
-        new WebServer(
-            engine,
-            new WebSettings(
-                start.port(), folder.readOrMakeToken(), start.profileHash(), start.store()));
-    this.address = web.start();
     folder.writeAddress(address.toString());
+  }
+
+  private static WebSettings settings(Start start, ServeFolder folder) {
+    return new WebSettings(
+        start.port(), folder.readOrMakeToken(), start.profileHash(), start.store());
+  }
+
+  /** Before the first step: a daemon that nobody can reach does not touch the instrument. */
+  private URI openPort() {
+    try {
+      return web.start();
+    } catch (RuntimeException failure) {
+      clock.close();
+      engine.close();
+      line.close();
+      throw failure;
+    }
   }
 
   private static void arm(QuartzClock clock, List<Wake> wakes) {
