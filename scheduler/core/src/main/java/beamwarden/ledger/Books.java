@@ -277,7 +277,7 @@ public final class Books {
         countBeam(before, booked.delivered());
         jobs.computeIfPresent(
             booked.delivered().exposure().job(),
-            (id, record) -> record.received(booked.delivered().exposure().pass(), receipt));
+            (id, record) -> record.received(booked.delivered().exposure(), receipt));
         sinceReading.put(
             receipt.grant(),
             new GrantRecord(

@@ -1,5 +1,7 @@
 package beamwarden.ledger;
 
+import beamwarden.beam.Exposure;
+import beamwarden.beam.RasterScan;
 import beamwarden.dose.Done;
 import beamwarden.dose.Trim;
 import beamwarden.instrument.Receipt;
@@ -115,11 +117,18 @@ public record JobRecord(
     return with(done, coincidences, exposures, faultsInARow, Optional.of(started.orElse(at)));
   }
 
-  JobRecord received(int pass, Receipt receipt) {
+  /**
+   * Progress counts only where it goes on from what is done: a receipt that is learnt late, after
+   * its lines were exposed once more, adds dose and nothing else.
+   */
+  JobRecord received(Exposure exposure, Receipt receipt) {
+    int pass = exposure.pass();
+    boolean goesOn =
+        !(exposure.scan() instanceof RasterScan raster) || raster.firstRow() == done.units(pass);
     Map<Integer, Long> counted = new HashMap<>(coincidences);
     counted.merge(pass, receipt.counts().getOrDefault(COINCIDENCES, 0L), Long::sum);
     return with(
-        done.plus(pass, receipt.unitsDone()),
+        goesOn ? done.plus(pass, receipt.unitsDone()) : done,
         counted,
         exposures + 1,
         receipt.fault().isPresent() ? faultsInARow + 1 : 0,

@@ -65,17 +65,19 @@ final class Booking {
     CurrentMeter meter = profile.abilities().meter();
     Current wished = reading.settings().current();
     Current atMost = meter.highestNow(reading.current());
+    boolean raised = false;
     for (GrantRecord record : turn.books.sinceReading().values()) {
       Delivery counted = record.counted();
       boolean sameBeam = counted.exposure().conditions().beam().equals(reading.settings());
       if (sameBeam && atMost.compareTo(counted.upperCurrent()) > 0) {
+        raised = true;
         turn.write(
             new Entry.GrantBooked(
                 counted.withUpperCurrent(atMost), record.receipt().orElseThrow()));
       }
     }
     turn.write(new Entry.CurrentMeasured(reading));
-    if (meter.outOfBounds(wished, reading.current())) {
+    if (raised || meter.outOfBounds(wished, reading.current())) {
       turn.note(
           What.STOPPED,
           "the probe current reads "

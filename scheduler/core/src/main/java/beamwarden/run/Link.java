@@ -9,8 +9,9 @@ import java.time.Instant;
  * @param until when the phase has taken too long, or when it ends by itself
  * @param fence the fencing number that this run raised last
  * @param session the chamber session that it reported; empty before
+ * @param why why there is no connection; empty when there is one or none was tried
  */
-record Link(Phase phase, Instant until, long fence, String session) {
+record Link(Phase phase, Instant until, long fence, String session, String why) {
   /** How far a connection is. */
   enum Phase {
     /** There is none; it is tried again at {@code until}. */
@@ -28,7 +29,7 @@ record Link(Phase phase, Instant until, long fence, String session) {
   }
 
   static Link begin(long fence) {
-    return new Link(Phase.OFFLINE, Instant.MIN, fence, "");
+    return new Link(Phase.OFFLINE, Instant.MIN, fence, "", "");
   }
 
   boolean online() {
@@ -36,6 +37,11 @@ record Link(Phase phase, Instant until, long fence, String session) {
   }
 
   Link to(Phase next, Instant newUntil) {
-    return new Link(next, newUntil, fence, session);
+    return new Link(next, newUntil, fence, session, next == Phase.ONLINE ? "" : why);
+  }
+
+  /** The connection is gone, or could not be made. */
+  Link lost(String reason, Instant again) {
+    return new Link(Phase.OFFLINE, again, fence, session, reason);
   }
 }

@@ -35,7 +35,8 @@ final class LinkSteps {
     Link link = turn.link;
     switch (link.phase()) {
       case OFFLINE -> {
-        turn.standingBy = "the instrument is not connected";
+        turn.standingBy =
+            "the instrument is not connected" + (link.why().isEmpty() ? "" : ": " + link.why());
         if (!turn.now.isBefore(link.until())) {
           turn.link = link.to(Link.Phase.CONNECTING, answerDue(turn));
           turn.send(new Command.Connect());
@@ -92,7 +93,7 @@ final class LinkSteps {
     if (turn.link.phase() != Link.Phase.CONNECTING) {
       return;
     }
-    turn.link = new Link(Link.Phase.FENCING, turn.now, turn.link.fence(), connected.session());
+    turn.link = new Link(Link.Phase.FENCING, turn.now, turn.link.fence(), connected.session(), "");
     Optional<String> weaker = Guarantees.weaker(setup.profile().abilities(), connected.abilities());
     if (weaker.isPresent() && !turn.books.stopped().equals(weaker)) {
       turn.note(What.STOPPED, weaker.get());
@@ -125,7 +126,8 @@ final class LinkSteps {
 
   void fenceRaised(Turn turn, Event.FenceRaised raised) {
     Set<Long> asked = turn.books.unresolved().keySet();
-    turn.link = new Link(Link.Phase.SEALING, answerDue(turn), raised.fence(), turn.link.session());
+    turn.link =
+        new Link(Link.Phase.SEALING, answerDue(turn), raised.fence(), turn.link.session(), "");
     turn.send(new Command.Seal(raised.fence(), asked, turn.books.handOverApproved()));
   }
 
@@ -200,7 +202,7 @@ final class LinkSteps {
     if (turn.link.phase() == Link.Phase.ONLINE) {
       turn.note(What.FAULT, "the connection to the instrument was lost: " + reason);
     }
-    turn.link = turn.link.to(Link.Phase.OFFLINE, turn.now.plus(setup.waits().reconnectAfter()));
+    turn.link = turn.link.lost(reason, turn.now.plus(setup.waits().reconnectAfter()));
     turn.doing = new Doing.Nothing();
     turn.current = Optional.empty();
     turn.next = Optional.empty();

@@ -145,6 +145,10 @@ final class WishSteps {
 
   private Optional<String> stop(Turn turn, StopWhen when) {
     turn.stopWish = Optional.of(when);
+    boolean sooner = turn.current.filter(Slot::stopping).isPresent() && when == StopWhen.NOW;
+    if (sooner) {
+      turn.send(new Command.StopExposure(StopWhen.NOW));
+    }
     turn.note(What.STOPPED, "a person stopped the night; release --all lets it go on");
     return Optional.empty();
   }

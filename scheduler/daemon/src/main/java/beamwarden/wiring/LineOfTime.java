@@ -31,7 +31,7 @@ final class LineOfTime {
   static TimeAnchor of(ServeFolder folder, OptionalDouble pace, Optional<Instant> from) {
     Path file = folder.lineOfTime();
     if (Files.exists(file)) {
-      return known(read(file), folder, pace, from);
+      return unchanged(read(file), folder, pace, from);
     }
     TimeAnchor chosen = choose(pace, from);
     try {
@@ -40,6 +40,13 @@ final class LineOfTime {
       throw new WiringException(file + " cannot be written: " + failure.getMessage());
     }
     return chosen;
+  }
+
+  /** The line of a store, if it has one. */
+  static Optional<TimeAnchor> known(ServeFolder folder) {
+    return Files.exists(folder.lineOfTime())
+        ? Optional.of(read(folder.lineOfTime()))
+        : Optional.empty();
   }
 
   private static TimeAnchor choose(OptionalDouble pace, Optional<Instant> from) {
@@ -59,7 +66,7 @@ final class LineOfTime {
     }
   }
 
-  private static TimeAnchor known(
+  private static TimeAnchor unchanged(
       TimeAnchor kept, ServeFolder folder, OptionalDouble pace, Optional<Instant> from) {
     if (pace.isPresent() && pace.getAsDouble() != kept.pace()) {
       throw new WiringException(

@@ -6,6 +6,7 @@ import beamwarden.clockwork.Alarm;
 import beamwarden.clockwork.ClockListener;
 import beamwarden.clockwork.QuartzClock;
 import beamwarden.clockwork.WallClock;
+import beamwarden.command.Workshop;
 import beamwarden.instrument.Instrument;
 import beamwarden.plan.PriorityPlanner;
 import beamwarden.profile.Profile;
@@ -31,6 +32,8 @@ import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.OptionalLong;
+import java.util.concurrent.CompletableFuture;
+import java.util.concurrent.ExecutionException;
 import java.util.concurrent.atomic.AtomicReference;
 import org.slf4j.Logger;
 import org.slf4j.LoggerFactory;
@@ -42,7 +45,7 @@ import org.slf4j.LoggerFactory;
  * the fence, open the port; the engine's first step then starts or finds the instrument's process.
  * Stops in the reverse order; the instrument is blanked and let go, so that nothing new begins.
  */
-public final class NightDaemon implements AutoCloseable {
+public final class NightDaemon implements Workshop.Serving {
   private static final Logger LOGGER = LoggerFactory.getLogger(NightDaemon.class);
 
   private final SqliteJournal journal;
@@ -53,6 +56,7 @@ public final class NightDaemon implements AutoCloseable {
   private final WebServer web;
   private final ServeFolder folder;
   private final URI address;
+  private final CompletableFuture<String> halted = new CompletableFuture<>();
 
   /**
    * What a daemon is started with.
@@ -102,7 +106,7 @@ public final class NightDaemon implements AutoCloseable {
             instrument,
             line,
             wakes -> arm(armed.get(), wakes),
-            reason -> LOGGER.error("nothing runs any more until a person has looked: {}", reason));
+            this::halted);
     this.clock =
         new QuartzClock(
             line, anchor, new WallClock(InstantSource.system(), line::wallStep), new Waking());
@@ -157,7 +161,21 @@ public final class NightDaemon implements AutoCloseable {
     return engine;
   }
 
-  /** Where it answers. */
+  private void halted(String reason) {
+    LOGGER.error("nothing runs any more until a person has looked: {}", reason);
+    halted.complete(reason);
+  }
+
+  @Override
+  public String awaitHalt() throws InterruptedException {
+    try {
+      return halted.get();
+    } catch (ExecutionException impossible) {
+      throw new IllegalStateException(impossible);
+    }
+  }
+
+  @Override
   public URI address() {
     return address;
   }

@@ -26,9 +26,11 @@ import java.util.ServiceLoader;
  *
  * @param recorded what was recorded, the books it began with included
  * @param state how it ended
+ * @param ended when it ended
  * @param refusal why the queue was not taken, if it was not
  */
-record RehearsedNight(List<Recorded> recorded, RunState state, Optional<String> refusal) {
+record RehearsedNight(
+    List<Recorded> recorded, RunState state, Instant ended, Optional<String> refusal) {
   private static final String ADAPTER = "simulated";
 
   /** How long a rehearsal goes on, on its own line of time, when jobs are still waiting. */
@@ -56,7 +58,7 @@ record RehearsedNight(List<Recorded> recorded, RunState state, Optional<String> 
         rehearsal.start();
         rehearsal.runUntilDone(from.plus(LONGEST));
       }
-      return new RehearsedNight(journal.read(), rehearsal.state(), refusal);
+      return new RehearsedNight(journal.read(), rehearsal.state(), time.instant(), refusal);
     }
   }
 

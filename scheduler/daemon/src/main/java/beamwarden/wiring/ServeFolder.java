@@ -31,6 +31,11 @@ record ServeFolder(Path root) {
     return root.resolve("line-of-time.json");
   }
 
+  /** The profile under which it was last served. */
+  Path profile() {
+    return root.resolve("profile.yaml");
+  }
+
   /** A folder of an adapter's own. */
   Path adapter(String adapter, String instrument) {
     return root.resolve(adapter).resolve(instrument);
