@@ -16,12 +16,13 @@ import java.util.regex.Pattern;
  * @param text the whole page
  * @param sections the text of each entry, by its section's title in lower case and by its key
  */
-record SettingsPage(String text, Map<String, Map<String, String>> sections) {
+public record SettingsPage(String text, Map<String, Map<String, String>> sections) {
   private static final Path FILE =
       Path.of(System.getProperty("beamwarden.root", "../..")).resolve("ops/settings.md");
   private static final Pattern KEY = Pattern.compile("\\*\\*`([a-z-]+)`\\*\\*");
 
-  static SettingsPage read() {
+  /** Reads it as it lies in the checkout. */
+  public static SettingsPage read() {
     try {
       return of(Files.readString(FILE));
     } catch (IOException missing) {
