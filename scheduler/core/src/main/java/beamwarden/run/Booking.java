@@ -58,26 +58,26 @@ final class Booking {
   }
 
   /**
-   * Books a current reading. One that leaves its bounds stops the night; one that shows more than
-   * an earlier grant counted on raises what was booked since the reading before.
+   * Books a current reading. Within its bounds the guarantees were kept, and what was booked on
+   * them stands. Out of them the night stops, and what was booked since the reading before is
+   * raised to what the reading says may have flowed.
    */
   static void reading(Turn turn, Profile profile, CurrentReading reading) {
     CurrentMeter meter = profile.abilities().meter();
     Current wished = reading.settings().current();
     Current atMost = meter.highestNow(reading.current());
-    boolean raised = false;
+    boolean left = meter.outOfBounds(wished, reading.current());
     for (GrantRecord record : turn.books.sinceReading().values()) {
       Delivery counted = record.counted();
       boolean sameBeam = counted.exposure().conditions().beam().equals(reading.settings());
-      if (sameBeam && atMost.compareTo(counted.upperCurrent()) > 0) {
-        raised = true;
+      if (left && sameBeam && atMost.compareTo(counted.upperCurrent()) > 0) {
         turn.write(
             new Entry.GrantBooked(
                 counted.withUpperCurrent(atMost), record.receipt().orElseThrow()));
       }
     }
     turn.write(new Entry.CurrentMeasured(reading));
-    if (raised || meter.outOfBounds(wished, reading.current())) {
+    if (left) {
       turn.note(
           What.STOPPED,
           "the probe current reads "
