@@ -6,11 +6,12 @@ import java.util.List;
 /**
  * A table of plain text: the first column to the left, the others to the right of their columns.
  *
- * <p>A first cell that would make the table too wide stands on a line of its own, wrapped where it
- * must be.
+ * <p>Where the table would be too wide its columns move together; a first cell that would still make
+ * it too wide stands on a line of its own, wrapped where it must be.
  */
 final class Table {
-  private static final String GAP = "  ";
+  private static final String USUAL_GAP = "  ";
+  private static final String NARROW_GAP = " ";
 
   private final List<List<String>> rows = new ArrayList<>();
   private final int columns;
@@ -36,17 +37,14 @@ final class Table {
     if (rows.size() == 1) {
       return List.of();
     }
-    int others = 0;
-    for (int column = 1; column < columns; column++) {
-      others += GAP.length() + widest(column);
-    }
-    int first = Math.max(1, Math.min(widest(0), width - others));
+    String gap = width(USUAL_GAP) <= width ? USUAL_GAP : NARROW_GAP;
+    int first = Math.max(1, Math.min(widest(0), width - width(gap) + widest(0)));
     List<String> lines = new ArrayList<>();
-    rows.forEach(row -> add(lines, row, first, width));
+    rows.forEach(row -> add(lines, row, gap, first, width));
     return lines;
   }
 
-  private void add(List<String> lines, List<String> row, int first, int width) {
+  private void add(List<String> lines, List<String> row, String gap, int first, int width) {
     String head = row.get(0);
     if (head.length() > first) {
       lines.addAll(Page.wrap(head, width));
@@ -54,9 +52,18 @@ final class Table {
     }
     StringBuilder line = new StringBuilder(left(head, first));
     for (int column = 1; column < columns; column++) {
-      line.append(GAP).append(right(row.get(column), widest(column)));
+      line.append(gap).append(right(row.get(column), widest(column)));
     }
     lines.add(line.toString().stripTrailing());
+  }
+
+  /** How wide the table is with a gap between its columns. */
+  private int width(String gap) {
+    int width = widest(0);
+    for (int column = 1; column < columns; column++) {
+      width += gap.length() + widest(column);
+    }
+    return width;
   }
 
   private int widest(int column) {

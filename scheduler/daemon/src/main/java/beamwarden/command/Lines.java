@@ -4,7 +4,10 @@ import beamwarden.answer.EntryAnswer;
 import beamwarden.answer.ProgressAnswer;
 import java.util.Set;
 
-/** Plain lines: one for each change of a job, and for what else happens in the night. */
+/**
+ * Plain lines of at most 80 columns: one for each change of a job, and for what else happens in the
+ * night. A reason that is too long is cut; the report has the whole of it.
+ */
 final class Lines implements Showing {
   private static final Set<String> WORTH_A_LINE =
       Set.of(
@@ -16,6 +19,9 @@ final class Lines implements Showing {
           "approved",
           "grant-presumed",
           "queue-submitted");
+
+  private static final int WIDTH = 80;
+  private static final String CUT = "...";
 
   private final Surroundings surroundings;
 
@@ -48,7 +54,9 @@ final class Lines implements Showing {
   }
 
   private void line(String time, String text) {
-    surroundings.answer(time + "  " + text + "\n");
+    String line = time + "  " + text;
+    boolean fits = line.length() <= WIDTH;
+    surroundings.answer((fits ? line : line.substring(0, WIDTH - CUT.length()) + CUT) + "\n");
   }
 
   private static String reason(String text) {

@@ -159,6 +159,16 @@ class WatchCommandTest {
   }
 
   @Test
+  void cutsAReasonThatIsTooLongForALine() throws Exception {
+    CompletableFuture<Called> watching = watch();
+    desk.record(new Entry.Noted(What.FAULT, "a long story ".repeat(20)));
+    endAll(JobState.DONE);
+    Called called = result(watching);
+    called.out().lines().forEach(line -> assertTrue(line.length() <= 80, line));
+    assertTrue(called.out().contains("fault: a long story a long story"), called.out());
+  }
+
+  @Test
   void hasNothingToWatchWithoutJobs() throws IOException {
     served.close();
     served = Served.in(store, new FakeDesk());
