@@ -84,6 +84,7 @@ class WireTest {
     assertEquals("µ", new String(wire.next().orElseThrow(), UTF_8));
     assertTrue(wire.next().isEmpty());
     assertEquals(Optional.of("the peer ended the connection"), wire.reason());
+    assertTrue(wire.awaitEnd(PATIENCE));
     assertEquals(1, letGo.get());
   }
 
