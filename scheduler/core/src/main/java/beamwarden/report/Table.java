@@ -6,8 +6,8 @@ import java.util.List;
 /**
  * A table of plain text: the first column to the left, the others to the right of their columns.
  *
- * <p>Where the table would be too wide its columns move together; a first cell that would still make
- * it too wide stands on a line of its own, wrapped where it must be.
+ * <p>Where the table would be too wide its columns move together; a first cell that would still
+ * make it too wide stands on a line of its own, wrapped where it must be.
  */
 final class Table {
   private static final String USUAL_GAP = "  ";
