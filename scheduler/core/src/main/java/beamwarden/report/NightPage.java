@@ -55,7 +55,7 @@ final class NightPage {
       table.row(
           progress.id(),
           progress.state().text(),
-          Texts.time(progress.started(), zone),
+          began(progress),
           Texts.time(progress.ended(), zone),
           Integer.toString(progress.exposures()),
           Texts.percent(progress.doneFraction()),
@@ -63,6 +63,11 @@ final class NightPage {
           Texts.fluence(job.dose().highest()));
     }
     page.heading(report.jobs().isEmpty() ? "No jobs" : "Jobs").table(table);
+  }
+
+  private String began(JobProgress progress) {
+    boolean before = progress.started().filter(report.night().from()::isAfter).isPresent();
+    return before ? "earlier" : Texts.time(progress.started(), zone);
   }
 
   private void undone() {

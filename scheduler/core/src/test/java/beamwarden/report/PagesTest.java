@@ -13,6 +13,7 @@ import beamwarden.quantity.Current;
 import beamwarden.queue.HeldFor;
 import beamwarden.run.InstrumentState;
 import java.time.LocalDate;
+import java.util.Map;
 import java.util.Optional;
 import org.junit.jupiter.api.Test;
 
@@ -76,6 +77,14 @@ class PagesTest {
           data/survey (1)
         """,
         night());
+  }
+
+  @Test
+  void aJobThatBeganInAnEarlierNightSaysSo() {
+    Delivery half = Lab.planned(Lab.map("survey"), Done.NOTHING, 1);
+    lab.submit(Lab.map("survey")).at(Lab.OPENS.minusSeconds(80_000)).open(half);
+    lab.at(Lab.OPENS.plusSeconds(900)).book(half, 100, Map.of());
+    assertTrue(night().contains("ready  earlier"), night());
   }
 
   @Test
