@@ -24,13 +24,13 @@ final class AdapterLink implements Runnable {
   private record Pending(Method method, Timeline.Waiting watch) {}
 
   private final PeerStarter starter;
-  private final InstrumentListener listener;
   private final Timeline real;
   private final Limits limits;
   private final Runnable whenEnded;
   private final Map<Long, Pending> pending = new HashMap<>(); // guarded by itself
   private long lastId; // guarded by pending
   private String lastWords; // on the thread of run() only; set when the conversation is over
+  private volatile InstrumentListener listener;
   private volatile Wire wire;
   private volatile boolean greeted;
   private volatile boolean quiet;
@@ -66,6 +66,12 @@ final class AdapterLink implements Runnable {
     }
     LOGGER.atWarn().addKeyValue("reason", reason).log("lost the connection to the adapter");
     tell(new InstrumentEvent.Lost(reason));
+  }
+
+  /** Asks afresh what instrument there is; from here on another listener hears what comes. */
+  void connectAgain(InstrumentListener other) {
+    listener = other;
+    send(new Call.Connect());
   }
 
   /** Asks the adapter; without effect before it has answered hello or after the end. */

@@ -16,8 +16,8 @@ import java.util.Set;
  * <p>Each verb becomes a request; the adapter's answer says only that it has arrived, and is all
  * that is timed. Events come in order on one thread of the connection's own. When the connection
  * ends, for whatever reason, the listener hears {@code Lost} once and nothing after it, and {@link
- * #connect} may be called again, from the listener itself if wished. A verb that is called without
- * a connection does nothing: {@code Lost} has been told, or is about to be.
+ * #connect} opens another one, when called from the listener itself too. A verb that is called
+ * without a connection does nothing: {@code Lost} has been told, or is about to be.
  *
  * <p>Verbs may be called from one thread at a time.
  */
@@ -42,7 +42,7 @@ public final class BridgeInstrument implements Instrument {
   /**
    * {@inheritDoc}
    *
-   * @throws IllegalStateException when it is connected, or closed
+   * @throws IllegalStateException when it is closed
    */
   @Override
   public synchronized void connect(InstrumentListener listener) {
@@ -50,7 +50,8 @@ public final class BridgeInstrument implements Instrument {
       throw new IllegalStateException("this instrument is closed; open another one");
     }
     if (link != null) {
-      throw new IllegalStateException("already connected; connect again once it is lost");
+      link.connectAgain(listener);
+      return;
     }
     link = new AdapterLink(starter, listener, real, limits, this::ended);
     thread = new Thread(link, "bridge-events");

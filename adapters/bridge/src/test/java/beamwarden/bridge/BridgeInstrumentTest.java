@@ -316,9 +316,26 @@ class BridgeInstrumentTest {
   }
 
   @Test
-  void refusesToConnectTwice() throws Exception {
+  void asksAfreshOnTheSameConnectionWhenItIsConnected() throws Exception {
+    Events later = new Events();
     try (ScriptedPeer peer = greeted()) {
-      assertThrows(IllegalStateException.class, () -> instrument.connect(events));
+      instrument.connect(later);
+      peer.hears("{\"jsonrpc\":\"2.0\",\"id\":3,\"method\":\"connect\"}");
+      peer.accepts(3);
+      peer.says(BEGUN);
+      assertEquals(new InstrumentEvent.Begun(17), later.next());
+      peer.leaves();
+    }
+    assertTrue(later.lost().endsWith("ended the connection"));
+    events.nothingMore();
+  }
+
+  @Test
+  void connectsOnceWhenItIsAskedTwiceBeforeItHasGreeted() throws Exception {
+    instrument.connect(events);
+    instrument.connect(events);
+    try (ScriptedPeer peer = ScriptedPeer.accept(port)) {
+      peer.greets();
       peer.says(BEGUN);
       assertEquals(new InstrumentEvent.Begun(17), events.next());
     }

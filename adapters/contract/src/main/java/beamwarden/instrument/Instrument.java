@@ -62,7 +62,11 @@ import java.util.Set;
  */
 public interface Instrument extends AutoCloseable {
   /**
-   * Connects; answers {@code Connected} or {@code Lost}. May be called again after {@code Lost}.
+   * Connects; answers {@code Connected} or {@code Lost}.
+   *
+   * <p>May be called again at any time, while connected too: what is told of the instrument's
+   * abilities, session and condition is then told afresh. What exposes goes on, and nothing begins
+   * before the next seal.
    */
   void connect(InstrumentListener listener);
 
