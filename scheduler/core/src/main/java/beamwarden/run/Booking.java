@@ -39,7 +39,19 @@ final class Booking {
         giveUpAfterRetries(turn, profile, job, fault);
       }
       case GIVE_UP_JOB -> fail(turn, job, fault.message());
-      case STOP_NIGHT -> turn.note(What.STOPPED, fault.message());
+      case STOP_NIGHT -> stopNight(turn, fault);
+    }
+  }
+
+  /**
+   * A fault does not wait for the boundary at which a person wanted to stop; and behind it may be a
+   * hand in the chamber.
+   */
+  static void stopNight(Turn turn, Fault fault) {
+    turn.stopWish = Optional.empty();
+    turn.link = turn.link.inDoubt();
+    if (turn.books.stopped().isEmpty()) {
+      turn.note(What.STOPPED, fault.message());
     }
   }
 

@@ -237,17 +237,9 @@ final class ExposureSteps {
   void trouble(Turn turn, Fault fault) {
     turn.note(What.FAULT, fault.message());
     if (fault.kind().remedy() == FaultKind.Remedy.STOP_NIGHT) {
-      stopNight(turn, fault);
+      Booking.stopNight(turn, fault);
     }
     turn.view = turn.view.unprepared();
-  }
-
-  /** A fault does not wait for the boundary at which a person wanted to stop. */
-  private static void stopNight(Turn turn, Fault fault) {
-    turn.stopWish = Optional.empty();
-    if (turn.books.stopped().isEmpty()) {
-      turn.note(What.STOPPED, fault.message());
-    }
   }
 
   private static Optional<Slot> currentOf(Turn turn, long grant) {

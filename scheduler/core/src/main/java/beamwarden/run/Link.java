@@ -9,9 +9,11 @@ import java.time.Instant;
  * @param until when the phase has taken too long, or when it ends by itself
  * @param fence the fencing number that this run raised last
  * @param session the chamber session that it reported; empty before
+ * @param doubted whether something happened since that may have ended the session
  * @param why why there is no connection; empty when there is one or none was tried
  */
-record Link(Phase phase, Instant until, long fence, String session, String why) {
+record Link(
+    Phase phase, Instant until, long fence, String session, boolean doubted, String why) {
   /** How far a connection is. */
   enum Phase {
     /** There is none; it is tried again at {@code until}. */
@@ -29,7 +31,7 @@ record Link(Phase phase, Instant until, long fence, String session, String why) 
   }
 
   static Link begin(long fence) {
-    return new Link(Phase.OFFLINE, Instant.MIN, fence, "", "");
+    return new Link(Phase.OFFLINE, Instant.MIN, fence, "", false, "");
   }
 
   boolean online() {
@@ -37,11 +39,24 @@ record Link(Phase phase, Instant until, long fence, String session, String why) 
   }
 
   Link to(Phase next, Instant newUntil) {
-    return new Link(next, newUntil, fence, session, next == Phase.ONLINE ? "" : why);
+    return new Link(next, newUntil, fence, session, doubted, next == Phase.ONLINE ? "" : why);
   }
 
   /** The connection is gone, or could not be made. */
   Link lost(String reason, Instant again) {
-    return new Link(Phase.OFFLINE, again, fence, session, reason);
+    return new Link(Phase.OFFLINE, again, fence, session, doubted, reason);
+  }
+
+  /** It reported a session. */
+  Link reported(String reported, Instant now) {
+    return new Link(Phase.FENCING, now, fence, reported, false, "");
+  }
+
+  Link sealing(long raised, Instant answerDue) {
+    return new Link(Phase.SEALING, answerDue, raised, session, doubted, "");
+  }
+
+  Link inDoubt() {
+    return new Link(phase, until, fence, session, true, why);
   }
 }

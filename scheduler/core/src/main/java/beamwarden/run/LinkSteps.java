@@ -58,10 +58,22 @@ final class LinkSteps {
         }
       }
       case ONLINE -> {
-        return keepAlive(turn);
+        return !askedAfresh(turn) && keepAlive(turn);
       }
     }
     return false;
+  }
+
+  /** Before anything else is exposed, an instrument whose session is in doubt is asked for it. */
+  private boolean askedAfresh(Turn turn) {
+    if (!turn.link.doubted() || turn.current.isPresent()) {
+      return false;
+    }
+    turn.link = turn.link.to(Link.Phase.CONNECTING, answerDue(turn));
+    forget(turn);
+    turn.standingBy = "the instrument is asked for its chamber session";
+    turn.send(new Command.Connect());
+    return true;
   }
 
   private boolean keepAlive(Turn turn) {
@@ -93,7 +105,7 @@ final class LinkSteps {
     if (turn.link.phase() != Link.Phase.CONNECTING) {
       return;
     }
-    turn.link = new Link(Link.Phase.FENCING, turn.now, turn.link.fence(), connected.session(), "");
+    turn.link = turn.link.reported(connected.session(), turn.now);
     Optional<String> weaker = Guarantees.weaker(setup.profile().abilities(), connected.abilities());
     if (weaker.isPresent() && !turn.books.stopped().equals(weaker)) {
       turn.note(What.STOPPED, weaker.get());
@@ -126,8 +138,7 @@ final class LinkSteps {
 
   void fenceRaised(Turn turn, Event.FenceRaised raised) {
     Set<Long> asked = turn.books.unresolved().keySet();
-    turn.link =
-        new Link(Link.Phase.SEALING, answerDue(turn), raised.fence(), turn.link.session(), "");
+    turn.link = turn.link.sealing(raised.fence(), answerDue(turn));
     turn.send(new Command.Seal(raised.fence(), asked, turn.books.handOverApproved()));
   }
 
@@ -140,11 +151,7 @@ final class LinkSteps {
       return;
     }
     turn.link = turn.link.to(Link.Phase.ONLINE, turn.now);
-    turn.beat = Beat.NONE;
-    turn.view = View.NOTHING;
-    turn.current = Optional.empty();
-    turn.next = Optional.empty();
-    turn.doing = new Doing.Nothing();
+    forget(turn);
     for (GrantRecord record : turn.books.unresolved().values()) {
       resolve(turn, record, report.fates().get(record.opened().grant()));
     }
@@ -203,6 +210,11 @@ final class LinkSteps {
       turn.note(What.FAULT, "the connection to the instrument was lost: " + reason);
     }
     turn.link = turn.link.lost(reason, turn.now.plus(setup.waits().reconnectAfter()));
+    forget(turn);
+  }
+
+  /** What the instrument was asked and told holds no longer. */
+  private static void forget(Turn turn) {
     turn.doing = new Doing.Nothing();
     turn.current = Optional.empty();
     turn.next = Optional.empty();

@@ -120,8 +120,6 @@ public final class Run {
       link.sealed(turn, sealed.report());
     } else if (event instanceof InstrumentEvent.SealRefused refused) {
       link.sealRefused(turn, refused);
-    } else if (event instanceof InstrumentEvent.HeartbeatSeen seen) {
-      turn.beat = turn.beat.answered(seen.number(), turn.now);
     } else if (turn.link.online()) {
       takeOnline(turn, event);
     }
@@ -136,6 +134,8 @@ public final class Run {
       work.measured(turn, measured);
     } else if (event instanceof InstrumentEvent.NotMeasured refused) {
       work.notMeasured(turn, refused);
+    } else if (event instanceof InstrumentEvent.HeartbeatSeen seen) {
+      turn.beat = turn.beat.answered(seen.number(), turn.now);
     } else if (event instanceof InstrumentEvent.WoundDown wound) {
       shifts.woundDown(turn, wound.readings());
     } else {

@@ -147,6 +147,7 @@ final class WishSteps {
     turn.stopWish = Optional.of(when);
     boolean sooner = turn.current.filter(Slot::stopping).isPresent() && when == StopWhen.NOW;
     if (sooner) {
+      turn.current = turn.current.map(slot -> slot.asStopping(StopWhen.NOW));
       turn.send(new Command.StopExposure(StopWhen.NOW));
     }
     turn.note(What.STOPPED, "a person stopped the night; release --all lets it go on");

@@ -5,6 +5,7 @@ import beamwarden.ledger.Books;
 import beamwarden.ledger.Entry;
 import beamwarden.ledger.JobRecord;
 import beamwarden.ledger.MemoryJournal;
+import beamwarden.ledger.Recorded;
 import beamwarden.queue.HeldFor;
 import beamwarden.queue.JobState;
 import beamwarden.queue.Queue;
@@ -195,7 +196,7 @@ final class NightHarness {
       fresh.add(beam(stretch));
     }
     stretchesSeen += fresh.size();
-    var recorded = journal.read();
+    List<Recorded> recorded = recorded();
     invariants.check(recorded, daemonIsDown() ? Books.of(recorded) : daemon.state().books(), fresh);
   }
 
@@ -210,6 +211,11 @@ final class NightHarness {
             stretch.centre(), stretch.widthMetres(), stretch.heightMetres(), stretch.turnDegrees()),
         stretch.electrons(),
         stretch.currentAmperes());
+  }
+
+  /** All entries, in order. */
+  List<Recorded> recorded() {
+    return journal.read();
   }
 
   /** How many operations of the daemon there were. */
