@@ -7,9 +7,8 @@
  * beamwarden.command.Workshop}, found at run time. The answer of a command goes to standard output,
  * as a page or with {@code --json} as JSON; everything else goes to standard error.
  *
- * <p>May import {@code answer}, {@code document}, {@code config}, {@code report}, {@code run},
- * {@code plan}, {@code estimate}, {@code ledger}, {@code dose}, {@code physics}, {@code profile},
- * {@code queue}, {@code shift}, {@code instrument}, {@code beam}, {@code quantity} and {@code
- * timing}.
+ * <p>May import {@code answer}, {@code document}, {@code report}, {@code run}, {@code plan}, {@code
+ * estimate}, {@code ledger}, {@code dose}, {@code physics}, {@code profile}, {@code queue}, {@code
+ * shift}, {@code instrument}, {@code beam}, {@code quantity} and {@code timing}.
  */
 package beamwarden.command;

@@ -124,7 +124,8 @@ final class EngineThread implements Desk, Engine.Outlet, AutoCloseable {
       while (from > 0 && recorded.get(from - 1).number() > number) {
         from--;
       }
-      return List.copyOf(recorded.subList(from, Math.min(recorded.size(), from + most)));
+      return List.copyOf(
+          recorded.subList(from, (int) Math.min(recorded.size(), (long) from + most)));
     }
   }
 

@@ -56,17 +56,16 @@ class ArchitectureTest {
                                             instrument beam quantity                    | commons-text snakeyaml
           scheduler/daemon   | store      | bridge ledger queue                         | jackson jdbc slf4j
           scheduler/daemon   | clockwork  | timing                                      | quartz slf4j
-          scheduler/daemon   | config     | ledger shift quantity                       |
           scheduler/daemon   | answer     | document report run plan ledger dose queue shift \
                                             instrument beam quantity                    | jackson
           scheduler/daemon   | web.api    | answer document report run plan ledger profile queue \
                                             shift instrument                            | jackson
           scheduler/daemon   | web.stream | web.api answer run ledger                   | slf4j
           scheduler/daemon   | web        | web.api web.stream answer run ledger        | undertow slf4j
-          scheduler/daemon   | command    | answer document config \
+          scheduler/daemon   | command    | answer document \
                                             report run plan estimate ledger dose physics profile \
                                             queue shift instrument beam quantity timing | picocli slf4j
-          scheduler/daemon   | wiring     | command web web.api web.stream answer document config \
+          scheduler/daemon   | wiring     | command web web.api web.stream answer document \
                                             clockwork store report run plan estimate ledger dose \
                                             physics profile queue shift bridge \
                                             instrument beam quantity timing             | jackson slf4j
