@@ -73,6 +73,16 @@ class DocumentationTest {
     assertTrue(Files.isExecutable(Repository.ROOT.resolve(command)), command);
   }
 
+  /** Long enough to say what must be said, short enough to be read. */
+  @Test
+  void theReadmeIsReadInOneSitting() {
+    String text = Markdown.of("README.md").text();
+    long lines = text.lines().count();
+    assertTrue(lines >= 120 && lines <= 160, lines + " lines");
+    int words = text.strip().split("\\s+", -1).length;
+    assertTrue(words <= 900, words + " words");
+  }
+
   /** The adapter itself names its options when it is given one that it does not know. */
   @Test
   void theOptionsOfTheSimulatedInstrumentAreThoseThatItKnows() {
