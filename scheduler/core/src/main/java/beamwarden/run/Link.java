@@ -12,8 +12,7 @@ import java.time.Instant;
  * @param doubted whether something happened since that may have ended the session
  * @param why why there is no connection; empty when there is one or none was tried
  */
-record Link(
-    Phase phase, Instant until, long fence, String session, boolean doubted, String why) {
+record Link(Phase phase, Instant until, long fence, String session, boolean doubted, String why) {
   /** How far a connection is. */
   enum Phase {
     /** There is none; it is tried again at {@code until}. */
