@@ -6,7 +6,6 @@ import static com.tngtech.archunit.lang.syntax.ArchRuleDefinition.noClasses;
 import static com.tngtech.archunit.library.dependencies.SlicesRuleDefinition.slices;
 
 import com.tngtech.archunit.base.DescribedPredicate;
-import com.tngtech.archunit.core.domain.JavaAccess;
 import com.tngtech.archunit.core.domain.JavaClass;
 import com.tngtech.archunit.core.domain.JavaCodeUnit;
 import com.tngtech.archunit.core.domain.JavaConstructorCall;
@@ -33,13 +32,29 @@ final class ArchitectureRules {
           "java.lang.Exception",
           "java.lang.RuntimeException");
 
-  /** Methods without a clock among their parameters that read the machine's. */
-  private static final Set<String> CLOCK_READS =
-      Set.of("currentTimeMillis", "nanoTime", "now", "getInstance", "system", "<init>");
+  private static final DescribedPredicate<JavaClass> JDK =
+      DescribedPredicate.describe(
+          "are the JDK's, databases apart",
+          type -> {
+            JavaClass single = type.getBaseComponentType();
+            String name = single.getPackageName();
+            boolean database = name.startsWith("java.sql") || name.startsWith("javax.sql");
+            return single.isPrimitive() || (name.startsWith("java.") && !database);
+          });
 
-  private static final Set<String> CLOCK_FACTORIES =
-      Set.of(
-          "system", "systemUTC", "systemDefaultZone", "tickMillis", "tickSeconds", "tickMinutes");
+  /** The constructor of a subclass calls its superclass's: that is no throwing. */
+  private static final DescribedPredicate<JavaConstructorCall> MAKES_A_GENERIC_EXCEPTION =
+      DescribedPredicate.describe(
+          "makes a generic exception",
+          call ->
+              GENERIC_EXCEPTIONS.contains(call.getTargetOwner().getName())
+                  && !(call.getOrigin().isConstructor()
+                      && call.getOriginOwner().isAssignableTo(Throwable.class)));
+
+  private static final DescribedPredicate<JavaCodeUnit> CAN_BE_CALLED_FROM_OUTSIDE =
+      DescribedPredicate.describe(
+          "can be called from outside",
+          unit -> isSeen(unit.getModifiers()) && isSeen(unit.getOwner().getModifiers()));
 
   private final String root;
 
@@ -61,8 +76,7 @@ final class ArchitectureRules {
         .resideInAPackage(qualified(row.name()))
         .should()
         .onlyDependOnClassesThat(
-            residesInAnyOf(allowed).or(JDK).as("are the JDK's or reside in " + allowed))
-        .allowEmptyShould(true);
+            residesInAnyOf(allowed).or(JDK).as("are the JDK's or reside in " + allowed));
   }
 
   ArchRule noneOfTheseImports(Collection<String> packages, Collection<String> forbidden) {
@@ -79,7 +93,7 @@ final class ArchitectureRules {
         .that()
         .resideOutsideOfPackages(qualified(packages))
         .should()
-        .accessTargetWhere(READS_THE_SYSTEM_CLOCK);
+        .accessTargetWhere(SystemClock.READS);
   }
 
   /**
@@ -121,16 +135,6 @@ final class ArchitectureRules {
     return names.stream().map(this::qualified).toArray(String[]::new);
   }
 
-  private static final DescribedPredicate<JavaClass> JDK =
-      DescribedPredicate.describe(
-          "are the JDK's, databases apart",
-          type -> {
-            JavaClass single = type.getBaseComponentType();
-            String name = single.getPackageName();
-            boolean database = name.startsWith("java.sql") || name.startsWith("javax.sql");
-            return single.isPrimitive() || (name.startsWith("java.") && !database);
-          });
-
   private static DescribedPredicate<JavaClass> residesInAnyOf(Collection<String> packages) {
     DescribedPredicate<JavaClass> inside =
         JavaClass.Predicates.resideInAnyPackage(packages.toArray(String[]::new));
@@ -143,43 +147,6 @@ final class ArchitectureRules {
         "named one of " + names,
         named -> names.stream().anyMatch(name -> named.getName().endsWith("." + name)));
   }
-
-  private static final DescribedPredicate<JavaAccess<?>> READS_THE_SYSTEM_CLOCK =
-      DescribedPredicate.describe("reads the system clock", ArchitectureRules::readsTheClock);
-
-  private static boolean readsTheClock(JavaAccess<?> access) {
-    String owner = access.getTargetOwner().getName();
-    String name = access.getTarget().getName();
-    return switch (owner) {
-      case "java.lang.System", "java.util.Calendar", "java.time.InstantSource" ->
-          CLOCK_READS.contains(name);
-      case "java.util.Date" -> access instanceof JavaConstructorCall call && takesNothing(call);
-      case "java.time.Clock" -> CLOCK_FACTORIES.contains(name);
-      default -> owner.startsWith("java.time.") && name.equals("now") && !takesAClock(access);
-    };
-  }
-
-  private static boolean takesNothing(JavaConstructorCall call) {
-    return call.getTarget().getRawParameterTypes().isEmpty();
-  }
-
-  private static boolean takesAClock(JavaAccess<?> access) {
-    return access.getTarget().getFullName().contains("(java.time.Clock)");
-  }
-
-  /** The constructor of a subclass calls its superclass's: that is no throwing. */
-  private static final DescribedPredicate<JavaConstructorCall> MAKES_A_GENERIC_EXCEPTION =
-      DescribedPredicate.describe(
-          "makes a generic exception",
-          call ->
-              GENERIC_EXCEPTIONS.contains(call.getTargetOwner().getName())
-                  && !(call.getOrigin().isConstructor()
-                      && call.getOriginOwner().isAssignableTo(Throwable.class)));
-
-  private static final DescribedPredicate<JavaCodeUnit> CAN_BE_CALLED_FROM_OUTSIDE =
-      DescribedPredicate.describe(
-          "can be called from outside",
-          unit -> isSeen(unit.getModifiers()) && isSeen(unit.getOwner().getModifiers()));
 
   private static boolean isSeen(Set<JavaModifier> modifiers) {
     return modifiers.contains(JavaModifier.PUBLIC) || modifiers.contains(JavaModifier.PROTECTED);
