@@ -33,6 +33,9 @@ import org.junit.jupiter.params.provider.ValueSource;
 class DocumentationTest {
   private static final Path PROFILE = Repository.ROOT.resolve("queue-examples/north-room.yaml");
 
+  /** A class of ours as the guide names it: with its package below ours. */
+  private static final Pattern CLASS = Pattern.compile("`([a-z]+(?:\\.[a-z]+)*\\.[A-Z]\\w+)`");
+
   /** Fewer than there are, so that an empty look cannot pass. */
   private static final int FEWEST_FILES = 5;
 
@@ -71,6 +74,22 @@ class DocumentationTest {
   void theCommandsThatTheReadmeOpensWithExist(String command) {
     assertEquals(List.of(command), Markdown.of("README.md").commands(command));
     assertTrue(Files.isExecutable(Repository.ROOT.resolve(command)), command);
+  }
+
+  @Test
+  void everyClassThatTheDevelopersGuideNamesExists() {
+    List<String> missing =
+        CLASS
+            .matcher(Markdown.of("DEVELOPERS.md").text())
+            .results()
+            .map(name -> "beamwarden." + name.group(1))
+            .filter(name -> !exists(name))
+            .toList();
+    assertEquals(List.of(), missing);
+  }
+
+  private static boolean exists(String name) {
+    return DocumentationTest.class.getResource("/" + name.replace('.', '/') + ".class") != null;
   }
 
   /** Long enough to say what must be said, short enough to be read. */
