@@ -8,6 +8,8 @@ public enum FaultKind {
   STARTED_TOO_LATE(Remedy.RETRY_HERE),
   /** No heartbeat came within the lease. */
   LEASE_ENDED(Remedy.RETRY_HERE),
+  /** Nobody can say what was done under a grant. */
+  OUTCOME_UNKNOWN(Remedy.RETRY_HERE),
   /** The focus was lost. */
   FOCUS_LOST(Remedy.RETRY_AFTER_RECOVERY),
   /** The region was not found again. */

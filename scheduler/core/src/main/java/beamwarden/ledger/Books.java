@@ -262,6 +262,7 @@ public final class Books {
 
     private void open(Entry.GrantOpened opened, Instant at) {
       lastGrant = Math.max(lastGrant, opened.grant());
+      handOverApproved = false; // It was used: grants are given again.
       unresolved.put(
           opened.grant(),
           new GrantRecord(opened, GrantState.OPEN, opened.inFull(), Optional.empty()));
@@ -286,26 +287,30 @@ public final class Books {
       replace(booked.chain(), receipt.grant(), booked.delivered());
     }
 
+    /** What was presumed is counted already. */
+    private void countBeam(GrantRecord before, Delivery delivery) {
+      if (before.state() == GrantState.OPEN) {
+        beamOnThisShift = beamOnThisShift.plus(delivery.upperBeamOn());
+      }
+    }
+
+    /** An outcome that stays unknown is a try that is used up. */
     private void presume(Entry.GrantPresumed presumed) {
       long grant = presumed.atMost().grant();
       GrantRecord before = unresolved.remove(grant);
-      if (before != null) {
-        countBeam(before, presumed.atMost());
-      }
       if (before != null && presumed.receipt().isEmpty()) {
         unresolved.put(
             grant,
             new GrantRecord(
                 before.opened(), GrantState.PRESUMED, presumed.atMost(), Optional.empty()));
       }
-      replace(presumed.chain(), grant, presumed.atMost());
-    }
-
-    /** What was presumed is counted already. */
-    private void countBeam(GrantRecord before, Delivery delivery) {
-      if (before.state() == GrantState.OPEN) {
-        beamOnThisShift = beamOnThisShift.plus(delivery.upperBeamOn());
+      if (before != null) {
+        countBeam(before, presumed.atMost());
       }
+      if (before != null && before.state() == GrantState.OPEN) {
+        jobs.computeIfPresent(before.opened().exposure().job(), (id, record) -> record.faulted());
+      }
+      replace(presumed.chain(), grant, presumed.atMost());
     }
 
     private void replace(String sample, long grant, Delivery delivery) {

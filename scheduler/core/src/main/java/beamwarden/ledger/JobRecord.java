@@ -23,6 +23,7 @@ import java.util.Optional;
  * @param heldFor what it waits for, when it is held
  * @param because why it is in that state; may be empty
  * @param letGoOn whether a person let it go on although a job before it ended undone
+ * @param personToo whether a person holds it besides what else it waits for
  * @param done how much of it is done
  * @param trim to what it was cut, if it was
  * @param trimmedBecause what its caps left when it was cut; empty when it was not
@@ -39,6 +40,7 @@ public record JobRecord(
     Optional<HeldFor> heldFor,
     String because,
     boolean letGoOn,
+    boolean personToo,
     Done done,
     Optional<Trim> trim,
     String trimmedBecause,
@@ -63,6 +65,7 @@ public record JobRecord(
         Optional.empty(),
         "",
         false,
+        false,
         Done.NOTHING,
         Optional.empty(),
         "",
@@ -73,22 +76,48 @@ public record JobRecord(
         Optional.empty());
   }
 
+  /** A person's hold stays beside what else a job waits for, and is what is left of both. */
   JobRecord changed(Entry.JobChanged change, Instant at) {
-    return new JobRecord(
-        job,
-        place,
+    boolean byPerson = change.heldFor().equals(Optional.of(HeldFor.A_PERSON));
+    if (byPerson && heldFor.filter(what -> what != HeldFor.A_PERSON).isPresent()) {
+      return in(state, heldFor, because, letGoOn, true, ended);
+    }
+    if (change.state() == JobState.WAITING && personToo) {
+      return in(
+          JobState.HELD, Optional.of(HeldFor.A_PERSON), "a person holds it", letGoOn, false, ended);
+    }
+    return in(
         change.state(),
         change.heldFor(),
         change.because(),
         letGoOn || letsGoOn(change),
+        personToo,
+        change.state().ended() ? Optional.of(at) : Optional.empty());
+  }
+
+  private JobRecord in(
+      JobState newState,
+      Optional<HeldFor> newHeldFor,
+      String newBecause,
+      boolean newLetGoOn,
+      boolean newPersonToo,
+      Optional<Instant> newEnded) {
+    return new JobRecord(
+        job,
+        place,
+        newState,
+        newHeldFor,
+        newBecause,
+        newLetGoOn,
+        newPersonToo,
         done,
         trim,
         trimmedBecause,
         coincidences,
         exposures,
-        change.state() == JobState.WAITING ? 0 : faultsInARow,
+        newState == JobState.WAITING ? 0 : faultsInARow,
         started,
-        change.state().ended() ? Optional.of(at) : Optional.empty());
+        newEnded);
   }
 
   private boolean letsGoOn(Entry.JobChanged change) {
@@ -103,6 +132,7 @@ public record JobRecord(
         heldFor,
         because,
         letGoOn,
+        personToo,
         done,
         Optional.of(cut.to()),
         cut.because(),
@@ -176,6 +206,7 @@ public record JobRecord(
         heldFor,
         because,
         letGoOn,
+        personToo,
         newDone,
         trim,
         trimmedBecause,

@@ -31,6 +31,9 @@ final class ApproveSteps {
       return placements(turn, approve);
     }
     if (thing.equals(Entry.Approved.HAND_OVER)) {
+      if (turn.link.phase() != Link.Phase.FOREIGN) {
+        return Optional.of("no instrument waits to be taken over");
+      }
       turn.write(new Entry.Approved(thing, approve.reason()));
       return Optional.empty();
     }
@@ -66,7 +69,7 @@ final class ApproveSteps {
       return Optional.of("no change of sample " + approve.thing() + " waits to be approved");
     }
     turn.write(new Entry.Approved(approve.thing(), approve.reason()));
-    turn.write(new Entry.SampleDeclared(asked.get(), approve.reason()));
+    Barrier.declare(turn, new Entry.SampleDeclared(asked.get(), approve.reason()));
     for (JobRecord job : held(turn, HeldFor.APPROVAL)) {
       if (job.job().sample().equals(approve.thing())) {
         JobSteps.goOn(turn, job, "approved");
@@ -106,7 +109,7 @@ final class ApproveSteps {
       raised = higher.get();
     }
     turn.write(new Entry.Approved(approve.thing(), approve.reason()));
-    turn.write(new Entry.SampleDeclared(raised, approve.reason()));
+    Barrier.declare(turn, new Entry.SampleDeclared(raised, approve.reason()));
     JobSteps.goOn(turn, record, "approved: " + approve.reason());
     return Optional.empty();
   }

@@ -55,7 +55,7 @@ final class Booking {
     }
   }
 
-  private static void giveUpAfterRetries(Turn turn, Profile profile, String job, Fault fault) {
+  static void giveUpAfterRetries(Turn turn, Profile profile, String job, Fault fault) {
     int before = turn.books.job(job).map(record -> record.faultsInARow()).orElse(0);
     if (before >= profile.retries()) {
       fail(turn, job, fault.message() + " (tried " + (before + 1) + " times)");

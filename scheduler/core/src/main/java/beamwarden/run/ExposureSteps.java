@@ -79,7 +79,7 @@ final class ExposureSteps {
     Instant latest = latestStart(turn, exposure, shift);
     if (turn.now.isAfter(latest) || !mayExpose(turn, exposure.job())) {
       turn.current = Optional.empty();
-      turn.write(neverSent(slot, "it could no longer be exposed in time"));
+      turn.write(Barrier.neverSent(slot, "it could no longer be exposed in time"));
       return;
     }
     Instant within = turn.now.plus(setup.waits().answerWithin());
@@ -129,13 +129,8 @@ final class ExposureSteps {
 
   /** Voids what was stored for later and never sent. */
   void voidNext(Turn turn, String because) {
-    turn.next.ifPresent(slot -> turn.write(neverSent(slot, because)));
+    turn.next.ifPresent(slot -> turn.write(Barrier.neverSent(slot, because)));
     turn.next = Optional.empty();
-  }
-
-  private static Entry neverSent(Slot slot, String because) {
-    return new Entry.GrantVoided(
-        slot.grant(), slot.opened().chain(), false, "it was never sent: " + because);
   }
 
   void begun(Turn turn, long grant) {
@@ -221,6 +216,11 @@ final class ExposureSteps {
   private Receiving judge(Turn turn, Slot slot, Receipt receipt) {
     Delivery inFull = slot.opened().inFull();
     Receiving outcome = Deliveries.received(inFull, receipt, setup.profile().abilities().meter());
+    if (receipt.fence() != turn.link.fence()) {
+      return new Receiving.Contradicts(
+          "its receipt has fencing number " + receipt.fence() + ", not " + turn.link.fence(),
+          inFull);
+    }
     Duration passed = Duration.between(slot.sent(), turn.now);
     Duration slack = inFull.tolerances().blanking().plus(CLOCK_SLACK);
     if (receipt.beamOn().compareTo(passed.plus(slack)) <= 0) {

@@ -2,6 +2,8 @@ package beamwarden.run;
 
 import beamwarden.dose.Deliveries;
 import beamwarden.dose.Receiving;
+import beamwarden.instrument.Fault;
+import beamwarden.instrument.FaultKind;
 import beamwarden.instrument.GrantFate;
 import beamwarden.instrument.InstrumentEvent;
 import beamwarden.instrument.SealReport;
@@ -151,7 +153,9 @@ final class LinkSteps {
       return;
     }
     turn.link = turn.link.to(Link.Phase.ONLINE, turn.now);
+    Beat counted = turn.beat;
     forget(turn);
+    turn.beat = counted;
     for (GrantRecord record : turn.books.unresolved().values()) {
       resolve(turn, record, report.fates().get(record.opened().grant()));
     }
@@ -169,14 +173,22 @@ final class LinkSteps {
               opened.inFull(), reported.receipt(), setup.profile().abilities().meter());
       Booking.book(turn, opened, outcome, reported.receipt());
       turn.toAcknowledge.add(opened.grant());
+      reported
+          .receipt()
+          .fault()
+          .ifPresent(fault -> Booking.fault(turn, setup.profile(), opened.exposure().job(), fault));
     } else if (record.state() == GrantState.OPEN) {
       turn.write(
           new Entry.GrantPresumed(
               opened.inFull(),
               "the instrument cannot say what was done under it",
               Optional.empty()));
+      Booking.giveUpAfterRetries(turn, setup.profile(), opened.exposure().job(), UNKNOWN);
     }
   }
+
+  private static final Fault UNKNOWN =
+      new Fault(FaultKind.OUTCOME_UNKNOWN, "nobody can say what was done under a grant of it");
 
   void sealRefused(Turn turn, InstrumentEvent.SealRefused refused) {
     if (turn.link.phase() != Link.Phase.SEALING) {
@@ -198,7 +210,7 @@ final class LinkSteps {
                 + " of this store, which is ahead of the store's own: the store is an older copy"
             : "the instrument is bound to another store, " + store;
     turn.standingBy = reason + "; approve hand-over to take it over";
-    turn.note(What.FAULT, turn.standingBy);
+    turn.note(What.STOPPED, turn.standingBy);
   }
 
   /** The connection is gone, or the instrument cannot be relied upon to answer. */

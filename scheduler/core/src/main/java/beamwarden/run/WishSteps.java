@@ -62,11 +62,11 @@ final class WishSteps {
   private static void declare(Turn turn, Sample sample) {
     Optional<SampleRecord> known = turn.books.sample(sample.id());
     if (known.isEmpty()) {
-      turn.write(new Entry.SampleDeclared(sample, ""));
+      Barrier.declare(turn, new Entry.SampleDeclared(sample, ""));
     } else {
       Sample tighter = Tightening.of(known.get().sample(), sample);
       if (!tighter.equals(known.get().sample())) {
-        turn.write(new Entry.SampleDeclared(tighter, ""));
+        Barrier.declare(turn, new Entry.SampleDeclared(tighter, ""));
       }
     }
   }
@@ -102,7 +102,9 @@ final class WishSteps {
         turn,
         ids,
         record -> {
-          if (record.state() != JobState.HELD) {
+          boolean already =
+              record.personToo() || record.heldFor().equals(Optional.of(HeldFor.A_PERSON));
+          if (!already) {
             JobSteps.hold(turn, record, HeldFor.A_PERSON, "a person holds it");
           }
           return Optional.empty();
