@@ -37,8 +37,7 @@ class WishStepsTest {
           new Event.Wish.Hold(List.of("survey")),
           new Event.Wish.Release(List.of("held"), false),
           new Event.Wish.Withdraw(List.of("survey")),
-          new Event.Wish.Stop(StopWhen.AT_BOUNDARY),
-          new Event.Wish.Approve(Entry.Approved.HAND_OVER, "the old store is gone"));
+          new Event.Wish.Stop(StopWhen.AT_BOUNDARY));
     }
 
     private final Steps steps = Steps.exposing(Lab.map("survey"), Lab.map("held"));

@@ -53,6 +53,7 @@ final class EngineThread implements Desk, Engine.Outlet, AutoCloseable {
   private final List<Recorded> recorded = new ArrayList<>();
   private final List<Runnable> listeners = new CopyOnWriteArrayList<>();
   private final Map<Long, CompletableFuture<Optional<String>>> askings = new ConcurrentHashMap<>();
+  private final List<Command.Answer> answered = new ArrayList<>();
   private final AtomicLong lastAsking = new AtomicLong();
   private volatile RunState state;
 
@@ -86,7 +87,12 @@ final class EngineThread implements Desk, Engine.Outlet, AutoCloseable {
     try {
       thread.execute(() -> engine.take(event));
     } catch (RejectedExecutionException refused) {
-      LOGGER.debug("not taken any more: {}", event);
+      if (thread.isShutdown()) {
+        LOGGER.debug("not taken any more: {}", event);
+      } else {
+        LOGGER.error("the engine hangs: {} events wait", WAITING_MAX);
+        onHalt.accept("the engine hangs; end the daemon and start it again");
+      }
     }
   }
 
@@ -98,6 +104,8 @@ final class EngineThread implements Desk, Engine.Outlet, AutoCloseable {
     enqueue(new Event.Asked(number, wish));
     if (thread.isShutdown()) {
       answer.complete(Optional.of("the daemon is closing"));
+    } else if (thread.getQueue().remainingCapacity() == 0) {
+      answer.complete(Optional.of("the engine hangs; end the daemon and start it again"));
     }
     return answer;
   }
@@ -137,10 +145,7 @@ final class EngineThread implements Desk, Engine.Outlet, AutoCloseable {
 
   @Override
   public void answered(Command.Answer answer) {
-    CompletableFuture<Optional<String>> asking = askings.remove(answer.number());
-    if (asking != null) {
-      asking.complete(answer.refusal());
-    }
+    answered.add(answer);
   }
 
   @Override
@@ -153,8 +158,18 @@ final class EngineThread implements Desk, Engine.Outlet, AutoCloseable {
   @Override
   public void stepped(RunState now, List<Wake> wakes) {
     state = now;
+    answered.forEach(this::tell);
+    answered.clear();
     clock.accept(wakes);
     listeners.forEach(Runnable::run);
+  }
+
+  /** Only once the state shows what was done: who is answered may look at once. */
+  private void tell(Command.Answer answer) {
+    CompletableFuture<Optional<String>> asking = askings.remove(answer.number());
+    if (asking != null) {
+      asking.complete(answer.refusal());
+    }
   }
 
   @Override
