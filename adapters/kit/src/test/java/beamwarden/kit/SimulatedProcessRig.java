@@ -26,7 +26,7 @@ import tools.jackson.databind.json.JsonMapper;
 
 /** The simulated instrument as a process of its own behind the bridge, faster than real time. */
 final class SimulatedProcessRig implements Rig {
-  private static final double PACE = 10;
+  private static final double PACE = 6;
   private static final Instant EVENING = Instant.parse("2031-03-12T19:00:00Z");
 
   /** More than the process takes to start. */

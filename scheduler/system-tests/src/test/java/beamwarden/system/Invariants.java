@@ -12,6 +12,8 @@ import beamwarden.ledger.GrantState;
 import beamwarden.ledger.JobRecord;
 import beamwarden.ledger.Recorded;
 import beamwarden.ledger.SampleRecord;
+import beamwarden.quantity.Current;
+import beamwarden.queue.Area;
 import beamwarden.queue.Averaging;
 import beamwarden.queue.Cap;
 import beamwarden.queue.Sample;
@@ -37,7 +39,6 @@ import java.util.SplittableRandom;
  * mean rule at table 4.1 of the physics notes) and a Gaussian for a spot.
  */
 final class Invariants {
-  private static final double METRES_OUTSIDE_ALLOWED = 60e-6;
   private static final int PLACES_PER_STRETCH = 2;
   private static final int RASTER = 24;
   private static final double ROUNDING = 1e-9;
@@ -50,9 +51,16 @@ final class Invariants {
   private final Map<Long, Delivery> counted = new HashMap<>();
   private final Map<Long, GrantState> states = new HashMap<>();
   private final Map<Long, Double> electronsByGrant = new HashMap<>();
+  private final Set<Long> receipted = new HashSet<>();
   private final Set<String> submitted = new HashSet<>();
   private final List<Beam> beams = new ArrayList<>();
+
+  /** Samples on which more flowed than the guarantees allow: their caps may be passed. */
   private final Set<String> guaranteesLeft = new HashSet<>();
+
+  /** Grants under which it did. */
+  private final Set<Long> surged = new HashSet<>();
+
   private final Map<String, List<Place>> places = new HashMap<>();
   private int entriesSeen;
 
@@ -92,6 +100,7 @@ final class Invariants {
       noExposureOutsideAShift(beam);
       if (beam.amperes() > opened.get(beam.grant()).inFull().upperCurrent().amperes()) {
         guaranteesLeft.add(beam.sample());
+        surged.add(beam.grant());
       }
       electronsByGrant.merge(beam.grant(), beam.electrons(), Double::sum);
       follow(beam);
@@ -122,6 +131,7 @@ final class Invariants {
       states.put(booked.delivered().grant(), GrantState.BOOKED);
     } else if (entry instanceof Entry.GrantPresumed presumed) {
       counted.put(presumed.atMost().grant(), presumed.atMost());
+      presumed.receipt().ifPresent(receipt -> receipted.add(receipt.grant()));
       states.put(presumed.atMost().grant(), GrantState.PRESUMED);
     } else if (entry instanceof Entry.GrantVoided voided) {
       counted.remove(voided.grant());
@@ -158,8 +168,7 @@ final class Invariants {
           double upper =
               booked == null ? 0 : booked.upperCurrent().electronsIn(booked.upperBeamOn());
           require(
-              guaranteesLeft.contains(opened.get(grant).exposure().sample())
-                  || electrons <= upper * (1 + ROUNDING),
+              isUnbookedSurge(grant) || electrons <= upper * (1 + ROUNDING),
               "NothingIsDoneTwiceWithoutBeingBookedTwice: grant "
                   + grant
                   + " "
@@ -205,7 +214,7 @@ final class Invariants {
 
   /** Only what was touched can have changed. */
   private void upperIsNeverBelowDelivered(Books books, Set<String> touched) {
-    for (SampleRecord record : withGuaranteesKept(books, touched)) {
+    for (SampleRecord record : withTruthBooked(books, touched)) {
       for (Place place : places.getOrDefault(record.sample().id(), List.of())) {
         atMostUpper(record, place);
       }
@@ -243,6 +252,28 @@ final class Invariants {
     }
   }
 
+  /** A surge is booked as what it was as soon as its receipt is in; before that nobody knows. */
+  private boolean isUnbookedSurge(long grant) {
+    boolean known = states.get(grant) == GrantState.BOOKED || receipted.contains(grant);
+    return surged.contains(grant) && !known;
+  }
+
+  private List<SampleRecord> withTruthBooked(Books books, Set<String> among) {
+    Set<String> unknown = new HashSet<>();
+    surged.stream()
+        .filter(this::isUnbookedSurge)
+        .forEach(grant -> unknown.add(opened.get(grant).exposure().sample()));
+    return books.samples().stream()
+        .filter(record -> among.contains(record.sample().id()))
+        .filter(record -> !unknown.contains(record.sample().id()))
+        .toList();
+  }
+
+  /** On how many samples the instrument left its guarantees. */
+  int samplesWithGuaranteesLeft() {
+    return guaranteesLeft.size();
+  }
+
   /** The promise holds while the instrument keeps its guarantees: samples on which it did. */
   private List<SampleRecord> withGuaranteesKept(Books books, Set<String> among) {
     return books.samples().stream()
@@ -259,7 +290,7 @@ final class Invariants {
 
   /** At the end of a night: the whole plane of every sample, raster by raster, and every job. */
   void checkAtTheEnd(Books books) {
-    for (SampleRecord record : withGuaranteesKept(books, places.keySet())) {
+    for (SampleRecord record : withTruthBooked(books, places.keySet())) {
       List<Beam> ofSample =
           beams.stream().filter(beam -> beam.sample().equals(record.sample().id())).toList();
       if (!ofSample.isEmpty()) {
@@ -272,19 +303,70 @@ final class Invariants {
   }
 
   private void raster(SampleRecord record, List<Beam> ofSample) {
-    double extent = METRES_OUTSIDE_ALLOWED + 60e-6;
+    double[] reach = reach(ofSample);
     for (int row = 0; row < RASTER; row++) {
       for (int column = 0; column < RASTER; column++) {
         Point at =
             new Point(
-                (column + 0.5) / RASTER * 2 * extent - extent,
-                (row + 0.5) / RASTER * 2 * extent - extent);
+                reach[0] + (column + 0.5) / RASTER * (reach[1] - reach[0]),
+                reach[2] + (row + 0.5) / RASTER * (reach[3] - reach[2]));
         Place place = new Place(at, 0);
         ofSample.forEach(beam -> add(place, beam));
         atMostUpper(record, place);
-        deliveredIsBelowTheCaps(record.sample(), place);
+        if (!guaranteesLeft.contains(record.sample().id())) {
+          deliveredIsBelowTheCaps(record.sample(), place);
+        }
       }
     }
+    if (!guaranteesLeft.contains(record.sample().id())) {
+      chargeIsBelowTheCaps(record.sample(), ofSample);
+    }
+  }
+
+  /** Left, right, bottom and top of where the beam was. */
+  private static double[] reach(List<Beam> ofSample) {
+    double[] reach = {Double.MAX_VALUE, -Double.MAX_VALUE, Double.MAX_VALUE, -Double.MAX_VALUE};
+    for (Beam beam : ofSample) {
+      double half = Math.hypot(beam.outline().widthMetres(), beam.outline().heightMetres()) / 2;
+      Point centre = beam.outline().centre();
+      reach[0] = Math.min(reach[0], centre.xMetres() - half);
+      reach[1] = Math.max(reach[1], centre.xMetres() + half);
+      reach[2] = Math.min(reach[2], centre.yMetres() - half);
+      reach[3] = Math.max(reach[3], centre.yMetres() + half);
+    }
+    return reach;
+  }
+
+  /** Charges and keep-out areas, summed from the record alone; areas here lie along the axes. */
+  private static void chargeIsBelowTheCaps(Sample sample, List<Beam> ofSample) {
+    for (Cap cap : sample.caps()) {
+      if (cap instanceof Cap.OnCharge charge) {
+        double coulombs = 0;
+        for (Beam beam : ofSample) {
+          boolean counts =
+              charge.area().isEmpty()
+                  || inside(beam, sample.area(charge.area().get()).orElseThrow());
+          coulombs += counts ? beam.electrons() * Current.ELEMENTARY_CHARGE_COULOMBS : 0;
+        }
+        require(
+            coulombs <= charge.limit().coulombs(),
+            "DeliveredIsNeverAboveACap: " + sample.id() + " " + charge + ": " + coulombs + " C");
+      }
+    }
+    sample.areas().stream()
+        .filter(area -> area.use() == Area.Use.KEEP_OUT)
+        .forEach(
+            area ->
+                require(
+                    ofSample.stream().noneMatch(beam -> inside(beam, area)),
+                    "NothingReachesAKeepOutArea: " + sample.id() + " " + area));
+  }
+
+  private static boolean inside(Beam beam, Area area) {
+    Point centre = beam.outline().centre();
+    Rectangle outline = area.outline();
+    return Math.abs(centre.xMetres() - outline.centre().xMetres()) < outline.widthMetres() / 2
+        && Math.abs(centre.yMetres() - outline.centre().yMetres()) < outline.heightMetres() / 2;
   }
 
   /** The promise itself, without any of the program's sums. */

@@ -239,6 +239,11 @@ final class NightHarness {
             .count();
   }
 
+  /** On how many samples the instrument left its guarantees. */
+  int surges() {
+    return invariants.samplesWithGuaranteesLeft();
+  }
+
   /** How many stretches of beam there were. */
   int stretches() {
     return stretchesSeen;

@@ -24,9 +24,10 @@ class SimulatedNightsTest {
   void everyInvariantHoldsAfterEveryEventOfManyNights() {
     Torture.Outcome outcome = Torture.nights(NIGHTS, SEED);
     System.out.printf("from seed %d: %s%n", SEED, outcome);
-    assertTrue(outcome.stretches() > NIGHTS, "the nights must expose something");
-    assertTrue(outcome.kills() > 0 || NIGHTS < 20, "the daemon must be killed now and then");
-    assertTrue(outcome.faults() > 0 || NIGHTS < 20, "something must go wrong now and then");
+    assertTrue(outcome.stretches() > 150 * NIGHTS, "a night must expose about 200 times");
+    assertTrue(outcome.kills() > NIGHTS, "the daemon must be killed in most nights");
+    assertTrue(outcome.faults() > NIGHTS, "something must go wrong in most nights");
+    assertTrue(outcome.surges() < NIGHTS, "most samples must be held to their caps");
   }
 
   @Test

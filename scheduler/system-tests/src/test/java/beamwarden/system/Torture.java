@@ -20,7 +20,7 @@ final class Torture {
   private static final double FAULTS_PER_STEP = 0.004;
   private static final double KILLS_PER_OPERATION = 0.002;
   private static final int SAMPLES = 3;
-  private static final int JOBS = 10;
+  private static final int JOBS = 30;
   private static final long LINE_EVERY = 50;
 
   /** The first seed when none is given. */
@@ -35,11 +35,14 @@ final class Torture {
    * @param stretches stretches of beam in all
    * @param kills how often the daemon was killed
    * @param faults how many faults were noted
+   * @param surges on how many samples the instrument left its guarantees, so that caps may be
+   *     passed
    * @param jobs jobs by the state in which they ended
    */
-  record Outcome(int nights, int stretches, int kills, int faults, Map<JobState, Integer> jobs) {
+  record Outcome(
+      int nights, int stretches, int kills, int faults, int surges, Map<JobState, Integer> jobs) {
     static Outcome none() {
-      return new Outcome(0, 0, 0, 0, new EnumMap<>(JobState.class));
+      return new Outcome(0, 0, 0, 0, 0, new EnumMap<>(JobState.class));
     }
 
     Outcome plus(NightHarness night, Books books) {
@@ -53,6 +56,7 @@ final class Torture {
           stretches + night.stretches(),
           kills + night.kills(),
           faults + night.faults(),
+          surges + night.surges(),
           sum);
     }
   }
