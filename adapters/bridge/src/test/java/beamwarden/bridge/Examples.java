@@ -199,6 +199,7 @@ final class Examples {
             new SealReport(
                 4,
                 STORE,
+                16,
                 Map.of(
                     15L, new GrantFate.NeverBegun(),
                     16L, new GrantFate.Reported(CUT_SHORT),

@@ -59,7 +59,7 @@ final class FakeInstrument implements Instrument {
     asked.add(Call.Seal.of(fence, store, grants, handOver));
     Map<Long, GrantFate> fates = new TreeMap<>();
     grants.forEach(grant -> fates.put(grant, new GrantFate.Unknown()));
-    tell(new InstrumentEvent.Sealed(new SealReport(fence, store, fates)));
+    tell(new InstrumentEvent.Sealed(new SealReport(fence, store, 0, fates)));
   }
 
   @Override

@@ -94,7 +94,7 @@ class PlainInstrument implements Instrument {
     forbidWaiting();
     Map<Long, GrantFate> fates = new HashMap<>();
     grants.forEach(grant -> fates.put(grant, fate(key(grant))));
-    tell(new InstrumentEvent.Sealed(new SealReport(fence, store, fates)));
+    tell(new InstrumentEvent.Sealed(new SealReport(fence, store, 0, fates)));
   }
 
   String key(long grant) {

@@ -73,6 +73,11 @@ public final class Notes {
     note(List.of("begun", grant, grant));
   }
 
+  /** The highest number of a grant of the present store that ever began; 0 when none did. */
+  long lastBegun() {
+    return bound().begun.isEmpty() ? 0 : bound().begun.last();
+  }
+
   boolean hasBegun(long grant) {
     return bound().begun.contains(grant);
   }

@@ -37,7 +37,9 @@ record Sealing(long fence, String store, Set<Long> asked, boolean handOver) {
     desk.forgetRefusals();
     desk.strike(FaultPlan.Step.SEAL);
     if (!desk.hasEnded()) {
-      desk.say(new InstrumentEvent.Sealed(new SealReport(fence, store, fates(notes, provable))));
+      desk.say(
+          new InstrumentEvent.Sealed(
+              new SealReport(fence, store, notes.lastBegun(), fates(notes, provable))));
     }
   }
 

@@ -319,6 +319,7 @@ public final class Books {
     }
 
     private void makeVoid(Entry.GrantVoided voided) {
+      lastGrant = Math.max(lastGrant, voided.grant());
       GrantRecord before = unresolved.remove(voided.grant());
       samples.computeIfPresent(
           voided.sample(), (id, record) -> record.with(record.dose().without(voided.grant())));

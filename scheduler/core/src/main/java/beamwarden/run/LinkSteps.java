@@ -149,9 +149,20 @@ final class LinkSteps {
       return;
     }
     if (report.fence() != turn.link.fence() || !report.store().equals(setup.store())) {
-      foreign(turn, report.fence(), report.store());
+      foreign(turn, boundElsewhere(report.fence(), report.store()));
       return;
     }
+    if (report.lastBegun() > turn.books.lastGrant() && !turn.books.handOverApproved()) {
+      foreign(
+          turn,
+          "the instrument has begun grant "
+              + report.lastBegun()
+              + ", and the books know none beyond "
+              + turn.books.lastGrant()
+              + ": the store is an older copy");
+      return;
+    }
+    skipNumbers(turn, report.lastBegun());
     turn.link = turn.link.to(Link.Phase.ONLINE, turn.now);
     Beat counted = turn.beat;
     forget(turn);
@@ -197,20 +208,34 @@ final class LinkSteps {
     if (refused.store().equals(setup.store()) && turn.books.handOverApproved()) {
       turn.link = turn.link.to(Link.Phase.FENCING, turn.now);
     } else {
-      foreign(turn, refused.fence(), refused.store());
+      foreign(turn, boundElsewhere(refused.fence(), refused.store()));
     }
   }
 
-  private void foreign(Turn turn, long fence, String store) {
+  private String boundElsewhere(long fence, String store) {
+    return store.equals(setup.store())
+        ? "the instrument has seen fencing number "
+            + fence
+            + " of this store, which is ahead of the store's own: the store is an older copy"
+        : "the instrument is bound to another store, " + store;
+  }
+
+  private static void foreign(Turn turn, String reason) {
     turn.link = turn.link.to(Link.Phase.FOREIGN, turn.now);
-    String reason =
-        store.equals(setup.store())
-            ? "the instrument has seen fencing number "
-                + fence
-                + " of this store, which is ahead of the store's own: the store is an older copy"
-            : "the instrument is bound to another store, " + store;
     turn.standingBy = reason + "; approve hand-over to take it over";
     turn.note(What.STOPPED, turn.standingBy);
+  }
+
+  /** Numbers that a newer copy of the books gave are never given again. */
+  private static void skipNumbers(Turn turn, long lastBegun) {
+    if (lastBegun > turn.books.lastGrant()) {
+      turn.write(
+          new Entry.GrantVoided(
+              lastBegun,
+              Entry.GENERAL,
+              false,
+              "its number was given by a newer copy of these books"));
+    }
   }
 
   /** The connection is gone, or the instrument cannot be relied upon to answer. */

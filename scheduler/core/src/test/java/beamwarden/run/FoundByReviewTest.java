@@ -100,7 +100,7 @@ class FoundByReviewTest {
     long before = steps.state().beat().sent();
     steps.tell(
         new InstrumentEvent.Sealed(
-            new SealReport(steps.state().link().fence(), Lab.STORE, Map.of())));
+            new SealReport(steps.state().link().fence(), Lab.STORE, 0, Map.of())));
     assertTrue(steps.state().beat().sent() >= before, "beats may not begin again");
   }
 
@@ -109,5 +109,29 @@ class FoundByReviewTest {
     Steps steps = Steps.exposing(Lab.map("survey"));
     steps.ask(new Event.Wish.Approve(Entry.Approved.HAND_OVER, "just in case"));
     assertTrue(!steps.books().handOverApproved());
+  }
+
+  @Test
+  void booksThatKnowFewerGrantsThanTheInstrumentAreAnOlderCopy() {
+    Steps steps = Steps.exposing(Lab.map("survey"));
+    steps.tell(new InstrumentEvent.Lost("gone"));
+    steps.later(steps.setup().waits().reconnectAfter()).wake();
+    steps.tell(Steps.connected("first"));
+    Map<Long, GrantFate> fates =
+        Map.of(1L, new GrantFate.Unknown(), 2L, new GrantFate.NeverBegun());
+    long fence = steps.state().link().fence();
+    steps.tell(new InstrumentEvent.Sealed(new SealReport(fence, Lab.STORE, 40, fates)));
+    assertEquals(Link.Phase.FOREIGN, steps.state().link().phase());
+    assertEquals(
+        "the instrument has begun grant 40, and the books know none beyond 2: the store is an older"
+            + " copy; approve hand-over to take it over",
+        steps.books().stopped().orElseThrow());
+    steps.ask(new Event.Wish.Approve(Entry.Approved.HAND_OVER, "the disk was lost"));
+    steps.later(steps.setup().waits().reconnectAfter()).wake();
+    steps.tell(Steps.connected("first"));
+    long again = steps.state().link().fence();
+    steps.tell(new InstrumentEvent.Sealed(new SealReport(again, Lab.STORE, 40, fates)));
+    assertEquals(40, steps.books().lastGrant());
+    assertTrue(steps.books().stopped().isPresent());
   }
 }

@@ -37,7 +37,7 @@ class LinkStepsTest {
       List<Command> sealed =
           steps.tell(
               new InstrumentEvent.Sealed(
-                  new SealReport(steps.state().link().fence(), Lab.STORE, Map.of())));
+                  new SealReport(steps.state().link().fence(), Lab.STORE, 0, Map.of())));
       assertEquals(List.of("Heartbeat", "Prepare"), Commands.kinds(sealed));
     }
 
@@ -116,7 +116,7 @@ class LinkStepsTest {
       steps.later(steps.setup().waits().reconnectAfter()).wake();
       steps.tell(
           new InstrumentEvent.Sealed(
-              new SealReport(fence, Lab.STORE, Map.of(1L, new GrantFate.NeverBegun()))));
+              new SealReport(fence, Lab.STORE, 0, Map.of(1L, new GrantFate.NeverBegun()))));
       assertEquals(Set.of(1L, 2L), steps.books().unresolved().keySet());
     }
   }
@@ -150,7 +150,7 @@ class LinkStepsTest {
       List<Command> commands =
           steps.tell(
               new InstrumentEvent.Sealed(
-                  new SealReport(steps.state().link().fence(), Lab.STORE, fates)));
+                  new SealReport(steps.state().link().fence(), Lab.STORE, 0, fates)));
       assertEquals(List.of("GrantBooked", "GrantVoided"), Commands.stored(commands));
       assertEquals(
           List.of("Commit", "Heartbeat", "Acknowledge", "Prepare"), Commands.kinds(commands));

@@ -197,7 +197,7 @@ final class Steps {
   }
 
   Steps sealed(Map<Long, GrantFate> fates) {
-    tell(new InstrumentEvent.Sealed(new SealReport(state.link().fence(), Lab.STORE, fates)));
+    tell(new InstrumentEvent.Sealed(new SealReport(state.link().fence(), Lab.STORE, 0, fates)));
     return this;
   }
 

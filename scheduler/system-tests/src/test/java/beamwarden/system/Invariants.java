@@ -313,7 +313,8 @@ final class Invariants {
         Place place = new Place(at, 0);
         ofSample.forEach(beam -> add(place, beam));
         atMostUpper(record, place);
-        if (!guaranteesLeft.contains(record.sample().id())) {
+        boolean exempt = isSpentGround(record.sample(), at);
+        if (!exempt && !guaranteesLeft.contains(record.sample().id())) {
           deliveredIsBelowTheCaps(record.sample(), place);
         }
       }
@@ -362,8 +363,18 @@ final class Invariants {
                     "NothingReachesAKeepOutArea: " + sample.id() + " " + area));
   }
 
+  /** Fluence caps of the whole sample do not hold there. */
+  private static boolean isSpentGround(Sample sample, Point at) {
+    return sample.areas().stream()
+        .filter(area -> area.use() == Area.Use.SACRIFICIAL)
+        .anyMatch(area -> inside(at, area));
+  }
+
   private static boolean inside(Beam beam, Area area) {
-    Point centre = beam.outline().centre();
+    return inside(beam.outline().centre(), area);
+  }
+
+  private static boolean inside(Point centre, Area area) {
     Rectangle outline = area.outline();
     return Math.abs(centre.xMetres() - outline.centre().xMetres()) < outline.widthMetres() / 2
         && Math.abs(centre.yMetres() - outline.centre().yMetres()) < outline.heightMetres() / 2;
