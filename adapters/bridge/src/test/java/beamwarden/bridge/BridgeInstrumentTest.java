@@ -75,7 +75,8 @@ class BridgeInstrumentTest {
       peer.accepts(3);
       peer.says(
           "{\"jsonrpc\":\"2.0\",\"method\":\"event\",\"params\":{\"event\":\"sealed\",\"report\":"
-              + "{\"fence\":4,\"store\":\"5f0c1d2e\",\"fates\":{\"16\":{\"fate\":\"unknown\"}}}}}");
+              + "{\"fence\":4,\"store\":\"5f0c1d2e\",\"lastBegun\":16,"
+              + "\"fates\":{\"16\":{\"fate\":\"unknown\"}}}}}");
       events.next(InstrumentEvent.Sealed.class);
 
       instrument.heartbeat(1);
